@@ -1,0 +1,139 @@
+//! The solve itself, on one surface and on ever finer ones until the error is small enough.
+
+use super::dense::Factored;
+use super::{Factor, Observer, Request, Solution, SolveError, Stage, Statistics, estimate, levels};
+use crate::stokes::quadrature::{Instructions, PairRules};
+use crate::stokes::rigid::Resistance;
+use crate::stokes::single_layer::{self, Moments};
+use crate::surface::{Blueprint, Panels, Point};
+
+/// Above this many unknowns Cholesky's third of the work is felt; below, LU is the reference.
+const CHOLESKY_FROM: usize = 1000;
+
+/// Next mesh is chosen for this share of the wanted error, so that one more step is usually the last.
+const AIM: f64 = 0.6;
+
+/// Most that the number of cuts grows in one step: beyond, the observed order is not to be trusted.
+const LARGEST_STEP: f64 = 2.0;
+
+/// Resistance of the rigid body about `reference`, to the accuracy asked for.
+///
+/// The surface may consist of several closed shells; they move as one body. `reference` is in the blueprint's length
+/// unit, and so is the resistance (viscosity 1): force per velocity is a length, torque per rotation a length cubed.
+///
+/// # Errors
+/// [`SolveError`] if the system does not fit the memory, is singular or ill-conditioned, or its solution fails the
+/// residual check.
+pub fn resistance(
+    blueprint: &Blueprint,
+    reference: Point,
+    request: &Request,
+    observer: &dyn Observer,
+) -> Result<Solution, SolveError> {
+    if let Some(wanted) = request.elements {
+        let panels = blueprint.subdivide(blueprint.cuts_for(wanted), request.geometry);
+        return resistance_of_panels(panels, reference, request, observer);
+    }
+    let mut request = request.clone();
+    let mut cuts = 2;
+    let mut best: Option<Solution> = None;
+    loop {
+        let panels = blueprint.subdivide(cuts, request.geometry);
+        if best.is_some() && single_layer::bytes_needed(3 * panels.node_count) > request.memory_limit {
+            break;
+        }
+        let solution = match resistance_of_panels(panels.clone(), reference, &request, observer) {
+            // The matrix of a very thin body is so nearly indefinite that only finer quadrature keeps it positive.
+            Err(SolveError::NotPositiveDefinite { .. }) if request.rules.is_none() => {
+                request.rules = Some(PairRules::standard());
+                resistance_of_panels(panels, reference, &request, observer)?
+            }
+            other => other?,
+        };
+        let error = solution.error.worst();
+        let order = solution.ratio.log2();
+        best = Some(solution);
+        if error <= request.accuracy {
+            break;
+        }
+        let growth = (error / (AIM * request.accuracy)).powf(1.0 / order).min(LARGEST_STEP);
+        let next = (cuts as f64 * growth).ceil() as usize;
+        cuts = next.next_multiple_of(2).max(cuts + 2);
+    }
+    // The loop ends with a solution: the first pass always makes one.
+    best.map(|mut solution| {
+        solution.reached = solution.error.worst() <= request.accuracy;
+        solution
+    })
+    .ok_or(SolveError::IllConditioned { condition: f64::INFINITY })
+}
+
+/// Resistance on one given surface.
+///
+/// # Errors
+/// As [`resistance`].
+pub fn resistance_of_panels(
+    panels: Panels,
+    reference: Point,
+    request: &Request,
+    observer: &dyn Observer,
+) -> Result<Solution, SolveError> {
+    let unknowns = 3 * panels.node_count;
+    let needed = single_layer::bytes_needed(unknowns);
+    if needed > request.memory_limit {
+        return Err(SolveError::TooLarge { unknowns, needed, available: request.memory_limit });
+    }
+    let rules = match &request.rules {
+        Some(rules) => rules.clone(),
+        None if request.elements.is_some() => PairRules::standard(),
+        None => PairRules::for_accuracy(request.accuracy),
+    };
+    let report = |fraction: f64| observer.progress(Stage::Assembling, unknowns, fraction);
+    let mut matrix = single_layer::assemble(&panels, &rules, Instructions::best(), &report);
+    let moments = Moments::new(&panels, &reference);
+    shift_null_space(&mut matrix, &moments, unknowns, request.shift);
+    observer.progress(Stage::Factorising, unknowns, 0.0);
+    let coarser = levels::coarse_resistances(&panels, &matrix, &moments)?;
+    let factor = request.factor.unwrap_or(if unknowns < CHOLESKY_FROM { Factor::Lu } else { Factor::Cholesky });
+    let factored = Factored::new(matrix, unknowns, factor)?;
+    observer.progress(Stage::Solving, unknowns, 0.0);
+    let right = moments.motions.iter().flatten().copied().collect::<Vec<_>>();
+    let mut tractions = right.clone();
+    factored.solve(&mut tractions);
+    let residual = factored.residual(&tractions, &right)?;
+    let condition = factored.condition()?;
+    let matrix = levels::energy(&right, &tractions, unknowns);
+    let (error, ratio) = estimate::relative_error(&matrix, &coarser, rules.error_on(&panels));
+    let eight_pi = 8.0 * std::f64::consts::PI;
+    let traction = |node: usize, motion: usize| {
+        let at = motion * unknowns + 3 * node;
+        eight_pi * Point::new(tractions[at], tractions[at + 1], tractions[at + 2])
+    };
+    Ok(Solution {
+        resistance: Resistance { matrix, reference },
+        error,
+        ratio,
+        coarser,
+        reached: true,
+        tractions: (0..panels.node_count).map(|node| std::array::from_fn(|motion| traction(node, motion))).collect(),
+        statistics: Statistics { triangles: panels.panels.len(), unknowns, factor, condition, residual },
+        panels,
+    })
+}
+
+/// Adds `sigma v v^T` for the null vector `v` of each closed shell, with `sigma` of the matrix's own size.
+///
+/// Constant pressure on a closed shell moves no fluid, so the matrix knows nothing of it; the shift sets the mean normal
+/// traction of the solution to zero and leaves the resistance alone.
+fn shift_null_space(matrix: &mut [f64], moments: &Moments, size: usize, factor: f64) {
+    let mean_diagonal = (0..size).map(|k| matrix[k * size + k]).sum::<f64>() / size as f64;
+    for normal in &moments.normals {
+        let square = normal.iter().map(|value| value * value).sum::<f64>();
+        let sigma = factor * mean_diagonal * (size as f64 / 3.0).sqrt() / square;
+        for (column, value) in matrix.chunks_exact_mut(size).zip(normal) {
+            for (entry, other) in column.iter_mut().zip(normal) {
+                *entry += sigma * value * other;
+            }
+        }
+    }
+}

@@ -1,0 +1,107 @@
+//! What the solver gives back.
+
+use nalgebra::Matrix6;
+use thiserror::Error;
+
+use super::Factor;
+use crate::stokes::rigid::Resistance;
+use crate::surface::{Panels, Point};
+
+/// Bounds on the relative error of the resistance against the surface that was solved.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct RelativeError {
+    /// Worst direction of the force-velocity block.
+    pub force: f64,
+    /// Worst direction of the torque-rotation block.
+    pub torque: f64,
+    /// Coupling block, against `sqrt(R_tt R_rr)`.
+    pub coupling: f64,
+}
+
+impl RelativeError {
+    /// The largest of the three.
+    pub fn worst(&self) -> f64 {
+        self.force.max(self.torque).max(self.coupling)
+    }
+}
+
+/// How the answer was found.
+#[derive(Debug, Clone, PartialEq)]
+pub struct Statistics {
+    /// Panels of the final surface.
+    pub triangles: usize,
+    /// Unknowns of the final system, three a node.
+    pub unknowns: usize,
+    /// The factorisation that ran.
+    pub factor: Factor,
+    /// Estimated condition number (1-norm) of the matrix.
+    pub condition: f64,
+    /// Relative residual of the worst column, by random probes.
+    pub residual: f64,
+}
+
+/// A solved body.
+#[derive(Debug, Clone)]
+pub struct Solution {
+    /// The resistance.
+    pub resistance: Resistance,
+    /// Its error.
+    pub error: RelativeError,
+    /// Ratio of successive changes with refinement, in the slower of force and torque.
+    pub ratio: f64,
+    /// Resistances on coarser spaces, finest first, that the error was estimated from.
+    pub coarser: Vec<Matrix6<f64>>,
+    /// Whether the wanted accuracy was reached; always true on a fixed mesh.
+    pub reached: bool,
+    /// The surface that was solved.
+    pub panels: Panels,
+    /// Traction on the fluid at each node, for unit velocity along x, y, z and unit rotation about x, y, z through the
+    /// reference point.
+    pub tractions: Vec<[Point; 6]>,
+    /// How it was found.
+    pub statistics: Statistics,
+}
+
+/// Why there is no solution.
+#[derive(Debug, Clone, PartialEq, Error)]
+#[non_exhaustive]
+pub enum SolveError {
+    /// The matrix does not fit.
+    #[error("{unknowns} unknowns need {needed} bytes of memory, and {available} are available")]
+    TooLarge {
+        /// Unknowns of the system.
+        unknowns: usize,
+        /// Bytes needed.
+        needed: u64,
+        /// Bytes allowed or available.
+        available: u64,
+    },
+    /// Cholesky met a pivot that is not positive: the assembled matrix is not positive definite.
+    #[error("the system is not positive definite (pivot {index} of {unknowns}), so its quadrature cannot be trusted")]
+    NotPositiveDefinite {
+        /// The pivot.
+        index: usize,
+        /// Unknowns of the system.
+        unknowns: usize,
+    },
+    /// The matrix is singular or nearly so.
+    #[error("the system is ill-conditioned (condition about {condition:.1e})")]
+    IllConditioned {
+        /// Estimated condition number.
+        condition: f64,
+    },
+    /// The solution does not solve the system.
+    #[error("the solution fails its residual check ({residual:.1e})")]
+    Residual {
+        /// Relative residual.
+        residual: f64,
+    },
+    /// A number that is not finite turned up.
+    #[error("the matrix entry in row {row}, column {column} is not finite")]
+    NotFinite {
+        /// Row of the matrix.
+        row: usize,
+        /// Column of the matrix.
+        column: usize,
+    },
+}
