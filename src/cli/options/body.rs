@@ -1,0 +1,95 @@
+//! The body, how it stands, and the point that torques are about.
+
+use clap::Args;
+use slowmote::physical::quantity::{parse_angle, parse_length};
+use slowmote::question::{Body, LengthUnit, Placing, Turn};
+use slowmote::surface::{Geometry, Point};
+
+use super::values::{direction, place};
+use crate::cli::Failure;
+
+/// Which body, and where.
+#[derive(Debug, Clone, Args)]
+#[command(next_help_heading = "The body")]
+pub struct BodyOptions {
+    /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh)
+    #[arg(value_name = "BODY")]
+    pub body: String,
+
+    /// The unit of a surface file's coordinates, such as `um`; files don't tell, and it is never guessed
+    #[arg(long, value_name = "UNIT", value_parser = length_unit)]
+    pub unit: Option<LengthUnit>,
+
+    /// Turns the body about a fixed axis through its centroid; repeat it for more turns, in their order
+    #[arg(long, value_name = "ANGLE@AXIS", value_parser = turn, allow_hyphen_values = true)]
+    pub turn: Vec<Turn>,
+
+    /// Where the body's centroid stands, such as `0um,0um,12um`
+    #[arg(long, value_name = "X,Y,Z", value_parser = place, allow_hyphen_values = true)]
+    pub at: Option<Point>,
+
+    /// The point whose velocity is meant and that torques are about [default: the centroid]
+    #[arg(long, value_name = "X,Y,Z", value_parser = place, allow_hyphen_values = true)]
+    pub reference: Option<Point>,
+}
+
+impl BodyOptions {
+    /// Makes or reads the body, with panels of this geometry or of the one that fits it.
+    ///
+    /// # Errors
+    /// There is no such shape or file, or it can't be used.
+    pub fn body(&self, geometry: Option<Geometry>) -> Result<Body, Failure> {
+        Body::read(&self.body, self.unit.as_ref(), geometry).map_err(|error| {
+            let hints = error.hints();
+            let failure = Failure::of(&error);
+            hints.into_iter().fold(failure, Failure::hint)
+        })
+    }
+
+    /// How it stands.
+    pub fn placing(&self) -> Placing {
+        Placing { turns: self.turn.clone(), at: self.at }
+    }
+}
+
+fn length_unit(text: &str) -> Result<LengthUnit, String> {
+    let one = parse_length(&format!("1{text}")).map_err(|_| format!("`{text}` is no unit of length such as `um`"))?;
+    if one.uncertainty_si() > 0.0 || text.starts_with(|c: char| c.is_ascii_digit() || c == '.') {
+        return Err(format!("`{text}` is no unit of length such as `um`"));
+    }
+    Ok(LengthUnit { symbol: text.trim().to_owned(), metres: one.value_si() })
+}
+
+fn turn(text: &str) -> Result<Turn, String> {
+    let (angle, axis) =
+        text.split_once('@').ok_or_else(|| format!("`{text}` is no turn such as `30deg@y`: the axis is missing"))?;
+    let angle = parse_angle(angle).map_err(|error| error.to_string())?;
+    if angle.uncertainty_si() > 0.0 {
+        return Err(format!("the angle in `{text}` has an uncertainty, which is not carried on"));
+    }
+    Ok(Turn { angle: angle.value_si(), axis: direction(axis)? })
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn turns_have_an_angle_and_an_axis() {
+        let quarter = turn("90deg@-z").unwrap();
+        assert!((quarter.angle - std::f64::consts::FRAC_PI_2).abs() < 1e-15);
+        assert_eq!(quarter.axis, -Point::z());
+        for wrong in ["", "90deg", "90@z", "90deg@", "z@90deg", "90±1deg@z"] {
+            assert!(turn(wrong).is_err(), "{wrong}");
+        }
+    }
+
+    #[test]
+    fn units_are_units_of_length() {
+        assert_eq!(length_unit("um").unwrap().metres, 1e-6);
+        assert_eq!(length_unit("mm").unwrap().symbol, "mm");
+        for wrong in ["", "kg", "2um", "um2", "0um", "parsec", "±1um"] {
+            assert!(length_unit(wrong).is_err(), "{wrong}");
+        }
+    }
+}

@@ -1,0 +1,15 @@
+//! Groups of options that several commands share, and how their values are read.
+
+mod body;
+mod fluid;
+mod motion;
+mod output;
+mod solver;
+mod values;
+
+pub use body::BodyOptions;
+pub use fluid::{FluidOptions, fluid_of};
+pub use motion::MotionOptions;
+pub use output::OutputOptions;
+pub use solver::SolverOptions;
+pub use values::parse_with;

@@ -1,0 +1,147 @@
+//! Where answers go: stdout, and a JSON file that is either whole or not there.
+
+use std::fs::{self, File};
+use std::io::{self, IsTerminal, Write};
+use std::path::{Path, PathBuf};
+
+use serde::Serialize;
+use slowmote::show::{Style, to_json};
+
+use super::Failure;
+use super::options::OutputOptions;
+
+/// Outputs of one run, opened before the work begins.
+pub struct Output {
+    quiet: bool,
+    json: Json,
+}
+
+enum Json {
+    None,
+    Stdout,
+    File(NewFile),
+}
+
+impl Output {
+    /// Opens what was asked for. `inputs` are files that must not be overwritten.
+    ///
+    /// # Errors
+    /// The JSON file can't be written, or is one of the inputs.
+    pub fn open(options: &OutputOptions, inputs: &[&Path]) -> Result<Self, Failure> {
+        let json = match &options.json {
+            None => Json::None,
+            Some(path) if path.as_os_str() == OutputOptions::STDOUT => Json::Stdout,
+            Some(path) => Json::File(NewFile::create(path, inputs)?),
+        };
+        Ok(Self { quiet: options.quiet, json })
+    }
+
+    /// Writes the answer: JSON where it was asked for, text on stdout unless that is JSON's or quiet was asked for.
+    ///
+    /// # Errors
+    /// A file or stdout can't be written; a reader of stdout that went away is none.
+    pub fn write<T: Serialize>(self, answer: &T, text: impl FnOnce(Style) -> String) -> Result<(), Failure> {
+        let json = || to_json(answer).map_err(|error| Failure::of(&error).during("the answer can't be put into JSON"));
+        let wants_text = !self.quiet;
+        match self.json {
+            Json::Stdout => return to_stdout(&json()?),
+            Json::File(file) => file.finish(json()?.as_bytes())?,
+            Json::None => {}
+        }
+        if wants_text { to_stdout(&text(stdout_style())) } else { Ok(()) }
+    }
+}
+
+/// Writes to stdout; a closed pipe is no error.
+///
+/// # Errors
+/// Anything else that keeps stdout from being written, such as a full disk.
+pub fn to_stdout(text: &str) -> Result<(), Failure> {
+    let mut stdout = io::stdout().lock();
+    match stdout.write_all(text.as_bytes()).and_then(|()| stdout.flush()) {
+        Err(error) if error.kind() != io::ErrorKind::BrokenPipe => {
+            Err(Failure::of(&error).during("the answer can't be written to stdout"))
+        }
+        _ => Ok(()),
+    }
+}
+
+/// Whether colours are wanted on a stream that is a terminal or not.
+pub fn wants_colour(is_terminal: bool) -> bool {
+    // NO_COLOR counts when it is set and not empty.
+    is_terminal && std::env::var_os("NO_COLOR").is_none_or(|value| value.is_empty())
+}
+
+/// The style of text on stdout.
+pub fn stdout_style() -> Style {
+    Style { colour: wants_colour(io::stdout().is_terminal()), ..Style::PLAIN }
+}
+
+/// A file that appears under its name only when it is whole.
+struct NewFile {
+    path: PathBuf,
+    /// Where it is written until then; none for a device, which is written directly.
+    draft: Option<PathBuf>,
+    file: File,
+}
+
+impl NewFile {
+    fn create(path: &Path, inputs: &[&Path]) -> Result<Self, Failure> {
+        let refuse = |why: String| Failure::new(format!("the JSON file {} can't be written", path.display())).hint(why);
+        let failed = |error: io::Error| {
+            Failure::of(&error)
+                .during(format!("the JSON file {} can't be written", path.display()))
+                .hint("check that its folder exists and may be written to")
+        };
+        let known = fs::canonicalize(path).ok();
+        if let Some(known) = &known {
+            if inputs.iter().any(|input| fs::canonicalize(input).is_ok_and(|input| input == *known)) {
+                return Err(refuse("it is the file the body is read from; choose another name".to_owned()));
+            }
+            let kind = fs::metadata(known).map_err(failed)?;
+            if kind.is_dir() {
+                return Err(refuse("it is a folder; name a file in it".to_owned()));
+            }
+            if !kind.is_file() {
+                let file = File::options().write(true).open(known).map_err(failed)?;
+                return Ok(Self { path: known.clone(), draft: None, file });
+            }
+        }
+        let path = known.unwrap_or_else(|| path.to_path_buf());
+        let Some(name) = path.file_name() else {
+            return Err(refuse("it has no name".to_owned()));
+        };
+        let mut draft_name = std::ffi::OsString::from(".");
+        draft_name.push(name);
+        draft_name.push(format!(".{}.part", std::process::id()));
+        let draft = path.with_file_name(draft_name);
+        let file = File::options().write(true).create(true).truncate(true).open(&draft).map_err(failed)?;
+        Ok(Self { path, draft: Some(draft), file })
+    }
+
+    fn finish(mut self, bytes: &[u8]) -> Result<(), Failure> {
+        let written = self.file.write_all(bytes).and_then(|()| self.file.flush());
+        let moved = written.and_then(|()| match &self.draft {
+            Some(draft) => fs::rename(draft, &self.path),
+            None => Ok(()),
+        });
+        match moved {
+            Ok(()) => {
+                self.draft = None;
+                Ok(())
+            }
+            Err(error) => {
+                Err(Failure::of(&error).during(format!("the JSON file {} can't be written", self.path.display())))
+            }
+        }
+    }
+}
+
+impl Drop for NewFile {
+    fn drop(&mut self) {
+        if let Some(draft) = &self.draft {
+            // Left over from a failed run; if it can't be removed there is nothing more to do.
+            let _ = fs::remove_file(draft);
+        }
+    }
+}

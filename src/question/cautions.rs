@@ -1,0 +1,47 @@
+//! What a careful user would want to be reminded of, from body and fluid.
+
+use crate::physical::Fluid;
+
+/// Red cells are told by the shape's name.
+const RED_CELL: &str = "redcell";
+
+/// Bodies with a smaller half length, m, feel the molecules of a liquid one by one. Common practice, no source.
+const FEWEST_MOLECULES_M: f64 = 5e-9;
+
+/// A half length, m, beyond which a unit was mistaken more often than not. A choice of this program.
+const LARGEST_USUAL_M: f64 = 0.1;
+
+/// The cautions for a body of this name and half length (m) in this fluid, the fluid's own first.
+pub(super) fn cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
+    let mut cautions = fluid.cautions().to_vec();
+    if half_length_m < FEWEST_MOLECULES_M {
+        cautions.push(
+            "So small a body feels the molecules of the fluid one by one; drag with a sticking, continuous fluid is \
+             only its order of size."
+                .to_owned(),
+        );
+    }
+    if half_length_m > LARGEST_USUAL_M {
+        cautions.push("This is a large body for creeping flow: is its unit right?".to_owned());
+    }
+    let red_cell = body_name.starts_with(RED_CELL);
+    let fluid_is = |name: &str| fluid.name().split(':').next() == Some(name);
+    if red_cell {
+        cautions.push(
+            "A red cell is soft, and its shape follows the flow and the medium: the answer is that of a rigid body of \
+             this shape at rest."
+                .to_owned(),
+        );
+    }
+    if red_cell || fluid_is("plasma") {
+        cautions.push(
+            "Blood differs from donor to donor. Nothing here replaces tests on the device or the sample: for medical \
+             use follow the local rules and the judgement of licensed practitioners."
+                .to_owned(),
+        );
+    }
+    if red_cell || fluid_is("culture-medium") || fluid_is("plasma") {
+        cautions.push("Handle cells and blood products by your laboratory's rules of biological safety.".to_owned());
+    }
+    cautions
+}

@@ -1,0 +1,27 @@
+//! One file a question: made dimensionless here, asked of the solver, and given its units back.
+//!
+//! Everything above this room has SI units; everything below has none. Nothing here prints, and what goes wrong is
+//! told with the facts that a message needs.
+
+mod answer;
+mod body;
+mod body_source;
+mod budget;
+mod cautions;
+mod drag;
+mod fluid;
+mod placing;
+mod validity;
+
+pub use answer::{
+    BodyAnswer, Diffusion, DragAnswer, FlowAnswer, FluidAnswer, InputShare, MeanDrag, MobilityBlocks, MotionAnswer,
+    NumberVerdict, PrincipalDrag, RelativeErrorAnswer, ResistanceBlocks, SolverAnswer, Tensor, Validity, Vector,
+    Verdict,
+};
+pub use body::{Body, Extent, KnownSize};
+pub use body_source::{BodyError, LengthUnit};
+pub use budget::InputUncertainty;
+pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
+pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
+pub use placing::{Placing, Turn};
+pub use validity::{Regime, SPEED_LIMIT_REYNOLDS};

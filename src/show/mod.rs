@@ -1,0 +1,16 @@
+//! What people and programs read: text for the one, JSON for the other.
+//!
+//! Everything here turns an answer into a string; nothing here prints, and nothing here computes physics.
+//! JSON is a promise (see [`crate::question::DragAnswer`]); the text is for eyes and may change.
+
+mod drag_text;
+mod fluid_text;
+mod json;
+mod numbers;
+mod sheet;
+mod tensor_text;
+
+pub use drag_text::{Assumed, drag_text};
+pub use fluid_text::{fluid_catalogue_text, fluid_text};
+pub use json::to_json;
+pub use sheet::Style;
