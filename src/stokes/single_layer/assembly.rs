@@ -26,7 +26,7 @@ const FAR_DISTANCES: [f64; 3] = [6.0, 3.0, 2.0];
 pub fn bytes_needed(unknowns: usize) -> u64 {
     let unknowns = unknowns as u64;
     let matrix = 8 * unknowns * unknowns;
-    matrix + matrix / 8 + 64 * (1 << 20)
+    matrix + matrix / 8 + 2 * (1 << 20)
 }
 
 /// The matrix, both halves, column by column; `progress` hears the fraction done.
