@@ -10,7 +10,7 @@ use command::{box_stl, program, put, run, slowmote, told};
 use slowmote::question::DragAnswer;
 use tempfile::tempdir;
 
-/// The text without what differs from run to run and from release to release.
+/// The text without what differs from run to run.
 fn steady(text: &str) -> String {
     let lines = text.lines().map(|line| match line.split_once(", in ") {
         Some((before, time)) if line.trim_start().starts_with("solved") && time.ends_with(" s") => {
@@ -41,7 +41,7 @@ fn the_text_of_a_body_that_couples() {
 
 #[test]
 fn the_text_of_a_motion_beyond_creeping_flow() {
-    let line = "drag sphere:1mm --elements 32 --speed 0.8mm/s --along 1,1,0";
+    let line = "drag sphere:1mm --elements 200 --speed 0.8mm/s --along 1,1,0";
     insta::assert_snapshot!("doubtful", steady(&slowmote(line).ends_with(0).stdout));
 }
 
@@ -132,9 +132,9 @@ fn json_can_go_to_a_device() {
 
 #[test]
 fn an_accuracy_that_is_not_reached_is_answered_with_code_3() {
-    let run = slowmote("drag cube:5um --accuracy 1e-7 --memory 4MB").ends_with(3);
+    let run = slowmote("drag cube:5um --accuracy 1e-7 --memory 75MB").ends_with(3);
     assert!(run.stdout.contains("accuracy not reached"), "{}", run.stdout);
-    let json = slowmote("drag cube:5um --accuracy 1e-7 --memory 4MB --json").ends_with(3);
+    let json = slowmote("drag cube:5um --accuracy 1e-7 --memory 75MB --json").ends_with(3);
     let answer: DragAnswer = serde_json::from_str(&json.stdout).unwrap();
     assert!(!answer.relative_error.accuracy_reached);
     assert!(answer.relative_error.solver_worst().is_none_or(|error| error > 1e-7));
@@ -190,7 +190,7 @@ fn threads_do_not_change_the_answer() {
         let run = slowmote(&format!("drag cube:5um --elements 200 --json --threads {threads}")).ends_with(0);
         serde_json::from_str::<DragAnswer>(&run.stdout).unwrap().hydrodynamic_radius_m.unwrap()
     };
-    assert!((radius("1") / radius("3") - 1.0).abs() < 1e-12);
+    assert!((radius("1") / radius("3") - 1.0).abs() < 1e-9);
 }
 
 #[test]

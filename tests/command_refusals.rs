@@ -45,6 +45,7 @@ fn values_of_options_need_units_and_sense() {
     refused("--elements 0", &["from 1"]);
     refused("--elements many", &["whole number"]);
     refused("--threads 0", &["--threads"]);
+    refused("--threads 100000", &["--threads", "1024"]);
     refused("--memory 4", &["4GB"]);
     refused("--unit kg", &["kg", "unit of length"]);
 }
@@ -76,6 +77,8 @@ fn files_that_are_none() {
     run(["drag", &path("prose.stl"), "--unit", "um"]).refuses(1, &["prose.stl", "hint: "]);
     put(folder.path(), "open.stl", &open_box_stl([3.0, 2.0, 1.0]));
     run(["drag", &path("open.stl"), "--unit", "um"]).refuses(1, &["open.stl", "a hole of 4 edges", "hint: "]);
+    #[cfg(unix)]
+    run(["drag", "/dev/zero", "--unit", "um"]).refuses(1, &["/dev/zero is a device"]);
     let binary: Vec<u8> = (0..4000_u32).map(|k| (k.wrapping_mul(2_654_435_761) >> 13) as u8).collect();
     fs::write(folder.path().join("noise.ply"), binary).unwrap();
     run(["drag", &path("noise.ply"), "--unit", "um"]).refuses(1, &["noise.ply", "hint: "]);
@@ -116,7 +119,8 @@ fn outputs_are_checked_before_the_work() {
 
 #[test]
 fn what_does_not_fit_the_memory_says_how_much_it_needs() {
-    slowmote("drag sphere:10um --elements 2000 --memory 1MB").refuses(1, &["memory", "GB", "--elements", "--memory"]);
+    slowmote("drag sphere:10um --elements 2000 --memory 1MB")
+        .refuses(1, &["memory", " and 1 MB are allowed", "--elements", "--memory"]);
 }
 
 #[test]

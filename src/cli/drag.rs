@@ -89,12 +89,15 @@ fn failure(error: &DragError) -> Failure {
     match error {
         DragError::NoVolume { .. } => failure.hint("the body must be a closed surface with its normals outwards"),
         DragError::Solve { source: SolveError::TooLarge { needed, available, .. }, .. } => {
-            let gigabytes = |bytes: u64| format!("{:.2} GB", bytes as f64 / 1e9);
+            let memory = |bytes: u64| match bytes {
+                0..1_000_000_000 => format!("{:.0} MB", bytes as f64 / 1e6),
+                _ => format!("{:.1} GB", bytes as f64 / 1e9),
+            };
             failure.hint(format!(
                 "{} would be needed and {} are allowed: ask for less with --accuracy or --elements, or allow more \
                  with --memory",
-                gigabytes(*needed),
-                gigabytes(*available)
+                memory(*needed),
+                memory(*available)
             ))
         }
         _ => failure.hint(

@@ -52,6 +52,12 @@ pub enum BodyError {
         /// Why it is no shape.
         source: ShapeError,
     },
+    /// A device was given, which may never end.
+    #[error("{} is a device, not a file", .path.display())]
+    Device {
+        /// The device.
+        path: PathBuf,
+    },
     /// A case file was given where one body is expected.
     #[error("{} is a case file, which this version does not read", .path.display())]
     CaseFile {
@@ -95,7 +101,9 @@ impl BodyError {
                  .ply, .off or .msh file"
                     .to_owned(),
             ],
-            Self::CaseFile { .. } => vec!["give one body: a shape such as `sphere:10um`, or a surface file".to_owned()],
+            Self::Device { .. } | Self::CaseFile { .. } => {
+                vec!["give one body: a shape such as `sphere:10um`, or a surface file".to_owned()]
+            }
             Self::NoUnit { longest, .. } => vec![unit_hint(*longest)],
             Self::NeedlessUnit { .. } => vec!["leave `--unit` out; it is for surface files".to_owned()],
             Self::Surface { source, .. } => vec![source.hint().to_owned()],
@@ -159,6 +167,9 @@ fn shape(text: &str, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> R
 }
 
 fn file(path: &Path, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> Result<Body, BodyError> {
+    if is_device(path) {
+        return Err(BodyError::Device { path: path.to_path_buf() });
+    }
     let RawSurface { mesh, mut notes, .. } = read_surface(path).map_err(BodyError::File)?;
     let path_buf = || path.to_path_buf();
     let Some(unit) = unit else {
@@ -184,6 +195,17 @@ fn file(path: &Path, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> R
         notes,
         ..Body::exact(name, body.blueprint.placed(&Placement { scale: unit.metres, ..Placement::identity() }))
     })
+}
+
+#[cfg(unix)]
+fn is_device(path: &Path) -> bool {
+    use std::os::unix::fs::FileTypeExt;
+    std::fs::metadata(path).is_ok_and(|file| file.file_type().is_char_device() || file.file_type().is_block_device())
+}
+
+#[cfg(not(unix))]
+fn is_device(_: &Path) -> bool {
+    false
 }
 
 /// How long the body would be in each of the units that make it one for creeping flow.

@@ -26,6 +26,9 @@ use crate::surface::{Geometry, Placement, Point};
 /// Name and version of the layout of [`DragAnswer`].
 pub const DRAG_SCHEMA: &str = "slowmote.drag.1";
 
+/// Relative difference of two measures of one surface that is nothing but rounding.
+const ROUNDING: f64 = 1e-10;
+
 /// Principal values that agree within this are told as different axes' only if the solver is surer than that.
 const WORST_AXIS_TOLERANCE: f64 = 0.05;
 
@@ -110,9 +113,10 @@ impl DragQuestion {
         let centroid = standing.measure.centroid;
         let reference = self.reference.unwrap_or(centroid);
         let length = 0.5 * standing.size().max();
-        let reduce = Placement { scale: 1.0 / length, turn: Matrix3::identity(), shift: -centroid / length };
-        let blueprint = self.body.blueprint.placed(&reduce.after(&stand));
-        let reduced_reference = reduce.apply(&reference);
+        // Straight from the body's own coordinates: by way of a far place digits would be lost.
+        let shift = -(stand.turn * given.measure.centroid) / length;
+        let blueprint = self.body.blueprint.placed(&Placement { scale: 1.0 / length, turn: stand.turn, shift });
+        let reduced_reference = (reference - centroid) / length;
         let request = Request { geometry: self.body.geometry, ..self.request.clone() };
         let solution = solve::resistance(&blueprint, reduced_reference, &request, observer)
             .map_err(|source| DragError::Solve { name: name(), source })?;
@@ -193,12 +197,12 @@ impl DragQuestion {
         let geometry = TORQUE_POWER * self.body.geometry_error + self.panel_error(solution, standing, length);
         let inputs = force_total(&input_shares).max(torque_total(&input_shares));
         RelativeErrorAnswer {
-            force: finite(estimate.force),
-            torque: finite(estimate.torque),
-            coupling: finite(estimate.coupling),
+            force: bound(estimate.force),
+            torque: bound(estimate.torque),
+            coupling: bound(estimate.coupling),
             geometry: finite(geometry),
             inputs,
-            total: finite(estimate.worst() + geometry + inputs),
+            total: bound(estimate.worst()).and_then(|solver| finite(solver + geometry + inputs)),
             input_shares,
             accuracy_asked: self.request.elements.is_none().then_some(self.request.accuracy),
             accuracy_reached: solution.reached,
@@ -217,7 +221,8 @@ impl DragQuestion {
         let solved = solution.panels.measure();
         let volume = (solved.volume * length.powi(3) / standing.measure.volume - 1.0).abs();
         let area = (solved.area * length.powi(2) / standing.measure.area - 1.0).abs();
-        volume.max(area)
+        let difference = volume.max(area);
+        if difference > ROUNDING { difference } else { 0.0 }
     }
 }
 
@@ -323,6 +328,11 @@ fn mobility_blocks(mobility: &Mobility) -> MobilityBlocks {
 
 fn rows(matrix: &Matrix3<f64>) -> Tensor {
     [0, 1, 2].map(|row| [0, 1, 2].map(|column| matrix[(row, column)]))
+}
+
+/// A solver's estimate of 100 % or more says that there were too few elements to tell.
+fn bound(estimate: f64) -> Option<f64> {
+    finite(estimate).filter(|estimate| *estimate < 1.0)
 }
 
 /// JSON has no infinity: what has no bound is null there.

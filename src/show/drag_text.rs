@@ -1,21 +1,25 @@
 //! The answer to `drag` as text: the body said back, the drags, whether they hold, and how far to trust them.
 
-use super::numbers::{digits_for, percent, plus_minus, si, temperature, vector};
-use super::sheet::{Sheet, Style, Tone};
+use super::numbers::{GLUE, digits_for, percent, plus_minus, si, temperature, vector};
+use super::sheet::{Sheet, Style, Tone, sentence};
 use super::tensor_text::{TensorText, side_by_side};
 use crate::physical::quantity::{DisplayUnit, format_number};
-use crate::question::{
-    DragAnswer, LengthUnit, MotionAnswer, RelativeErrorAnswer, SPEED_LIMIT_REYNOLDS, Vector, Verdict,
-};
+use crate::question::{DragAnswer, LengthUnit, MotionAnswer, SPEED_LIMIT_REYNOLDS, Vector, Verdict};
 
 /// Digits of sizes said back.
 const SIZE_DIGITS: usize = 3;
+
+/// Units of area are a million apart: the larger one is taken from a fiftieth of it on.
+const AREA_UNIT_LEAD: f64 = 50.0;
 
 /// Digits of temperature, viscosity and density.
 const FLUID_DIGITS: usize = 4;
 
 /// An axis within this angle of a laboratory axis, in cosine, goes by its name.
 const NAMED_AXIS_COSINE: f64 = 0.999_95;
+
+/// A body that keeps its orientation for longer than this, s, does not care for Brownian motion: two weeks.
+const LONGEST_MEMORY_S: f64 = 1.2e6;
 
 /// What was taken for granted because nothing was said, and is said aloud.
 #[derive(Debug, Clone, Default, PartialEq)]
@@ -47,7 +51,7 @@ pub fn drag_text(answer: &DragAnswer, assumed: &Assumed, style: Style) -> String
     }
     sheet.gap();
     regime(&mut sheet, answer);
-    trust(&mut sheet, &answer.relative_error);
+    trust(&mut sheet, answer);
     let solver = &answer.solver;
     sheet.item(
         "solved",
@@ -60,7 +64,7 @@ pub fn drag_text(answer: &DragAnswer, assumed: &Assumed, style: Style) -> String
         ),
     );
     for caution in &answer.cautions {
-        sheet.item("beware", caution);
+        sheet.item("beware", &sentence(caution));
     }
     sheet.gap();
     tensors(&mut sheet, answer);
@@ -81,17 +85,20 @@ fn body_and_fluid(sheet: &mut Sheet, answer: &DragAnswer, assumed: &Assumed) {
     }
     sheet.item("size", &size);
     let equal_sphere = (6.0 * body.volume_m3 / std::f64::consts::PI).cbrt();
+    // Chosen a little early, so that 0.88 mm2 is not 880000 um2.
+    let area = DisplayUnit::AREA.choose(AREA_UNIT_LEAD * body.area_m2, SIZE_DIGITS);
     sheet.item(
         "",
         &format!(
-            "volume {}, that of a sphere of {}; surface {}",
+            "volume {}, that of a sphere {} across; surface {}{GLUE}{}",
             si(body.volume_m3, DisplayUnit::VOLUME, SIZE_DIGITS),
             si(equal_sphere, DisplayUnit::LENGTH, SIZE_DIGITS),
-            si(body.area_m2, DisplayUnit::AREA, SIZE_DIGITS),
+            area.number(body.area_m2, SIZE_DIGITS),
+            area.symbol(),
         ),
     );
     for note in &body.notes {
-        sheet.item("", note);
+        sheet.item("", &sentence(note));
     }
     let mut fluid = format!(
         "{} ± {}, {}",
@@ -146,12 +153,12 @@ fn drags(sheet: &mut Sheet, answer: &DragAnswer) {
             if all_equal(rotation, torque_error) {
                 ", about any axis".to_owned()
             } else {
-                format!(", least, about {}", axis_name(&answer.principal.rotation_axes[0]))
+                format!(", least, about {}", line_name(&answer.principal.rotation_axes[0]))
             }
         ),
     );
     if !all_equal(rotation, torque_error) {
-        let most = axis_name(&answer.principal.rotation_axes[2]);
+        let most = line_name(&answer.principal.rotation_axes[2]);
         sheet.item("", &format!("{}, most, about {most}", turning(rotation[2])));
     }
     diffusion(sheet, answer, digits_for(force_error), digits);
@@ -170,8 +177,8 @@ fn extremes(
         sheet.item(label, "the same in every direction");
         return;
     }
-    sheet.item(label, &format!("{} least, along {}", text(values[0]), axis_name(&axes[0])));
-    sheet.item("", &format!("{} most, along {}", text(values[2]), axis_name(&axes[2])));
+    sheet.item(label, &format!("{} least, along {}", text(values[0]), line_name(&axes[0])));
+    sheet.item("", &format!("{} most, along {}", text(values[2]), line_name(&axes[2])));
 }
 
 fn diffusion(sheet: &mut Sheet, answer: &DragAnswer, digits: usize, turning_digits: usize) {
@@ -179,14 +186,16 @@ fn diffusion(sheet: &mut Sheet, answer: &DragAnswer, digits: usize, turning_digi
     let translation = trace(&answer.diffusion.translation_m2_per_s) / 3.0;
     // In the mean over axes an orientation is forgotten at twice the mean coefficient.
     let forgetting = 1.0 / (2.0 * trace(&answer.diffusion.rotation_per_s) / 3.0);
-    sheet.item(
-        "diffuses",
-        &format!(
-            "{} in the mean, and forgets its orientation in about {}",
-            si(translation, DisplayUnit::DIFFUSION, digits),
-            si(forgetting, DisplayUnit::TIME, turning_digits.min(SIZE_DIGITS)),
-        ),
-    );
+    let translation = si(translation, DisplayUnit::DIFFUSION, digits);
+    let turning = if forgetting < LONGEST_MEMORY_S {
+        format!(
+            "forgets its orientation in about {}",
+            si(forgetting, DisplayUnit::TIME, turning_digits.min(SIZE_DIGITS))
+        )
+    } else {
+        "keeps its orientation for weeks and longer".to_owned()
+    };
+    sheet.item("diffuses", &format!("{translation} in the mean, and {turning}"));
 }
 
 fn motion_lines(sheet: &mut Sheet, answer: &DragAnswer, motion: &MotionAnswer, assumed: &Assumed) {
@@ -210,8 +219,9 @@ fn motion_lines(sheet: &mut Sheet, answer: &DragAnswer, motion: &MotionAnswer, a
     sheet.item("motion", &parts.join("; "));
     load(sheet, "force", &motion.force_n, motion.force_error_n, DisplayUnit::FORCE, digits);
     if let Some(corrected) = motion.force_with_inertia_n.filter(|_| correction_matters(answer)) {
-        load(sheet, "", &corrected, None, DisplayUnit::FORCE, digits);
-        sheet.item("", "(the second with the first effect of inertia)");
+        let least = motion.force_error_n.unwrap_or(0.0);
+        let text = vector(corrected, DisplayUnit::FORCE, digits, least, norm(&corrected));
+        sheet.item("", &format!("{text} with the first effect of inertia"));
     }
     load(sheet, "torque", &motion.torque_n_m, motion.torque_error_n_m, DisplayUnit::TORQUE, digits);
     sheet.item("", &format!("by the fluid on the body, x, y, z; torque about {}", reference_name(answer)));
@@ -265,11 +275,12 @@ fn regime(sheet: &mut Sheet, answer: &DragAnswer) {
             .item(label, &format!("creeping up to {limit} {whence} (particle Reynolds number {SPEED_LIMIT_REYNOLDS})"));
     }
     for note in &validity.notes {
-        sheet.item("", note);
+        sheet.item("", &sentence(note));
     }
 }
 
-fn trust(sheet: &mut Sheet, error: &RelativeErrorAnswer) {
+fn trust(sheet: &mut Sheet, answer: &DragAnswer) {
+    let error = &answer.relative_error;
     let solver = error.solver_worst();
     let mut parts = vec![match solver {
         Some(solver) => format!("solver {}", percent(solver)),
@@ -281,7 +292,9 @@ fn trust(sheet: &mut Sheet, error: &RelativeErrorAnswer) {
         let size = if force == torque { force } else { format!("{force} of drags and {torque} of torques") };
         parts.push(format!("{} {size}", share.name));
     }
-    sheet.item("trust", &format!("{} on every number: {}", plus_minus(error.total), parts.join(", ")));
+    // No error bound covers what the equations leave out.
+    let condition = if correction_matters(answer) { ", as far as the regime allows" } else { "" };
+    sheet.item("trust", &format!("{} on every number{condition}: {}", plus_minus(error.total), parts.join(", ")));
     if let Some(asked) = error.accuracy_asked {
         if error.accuracy_reached {
             sheet.item("", &format!("the solver was asked for {} and reached it", percent(asked)));
@@ -355,7 +368,7 @@ fn centres(sheet: &mut Sheet, answer: &DragAnswer) {
 fn reference_name(answer: &DragAnswer) -> String {
     let point = answer.reference_point_m;
     let size = answer.body.size_m.into_iter().fold(0.0, f64::max);
-    let place = vector(point, DisplayUnit::LENGTH, SIZE_DIGITS + 1, 1e-9 * size, size);
+    let place = vector(point, DisplayUnit::LENGTH, SIZE_DIGITS + 1, 1e-6 * size, size);
     if point == answer.body.centroid_m { format!("the centroid ({place})") } else { format!("the point {place}") }
 }
 
@@ -379,6 +392,12 @@ fn axis_name(axis: &Vector) -> String {
     }
     let parts = axis.map(|x| format!("{x:.3}")).map(|part| if part == "-0.000" { "0.000".to_owned() } else { part });
     format!("({})", parts.join(", "))
+}
+
+/// An axis that has no sense of its own, told with its largest component positive.
+fn line_name(axis: &Vector) -> String {
+    let largest = axis.iter().fold(0.0_f64, |largest, x| if x.abs() > largest.abs() { *x } else { largest });
+    axis_name(&axis.map(|x| if largest < 0.0 { -x } else { x }))
 }
 
 fn norm(vector: &Vector) -> f64 {

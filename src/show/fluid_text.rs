@@ -1,7 +1,7 @@
 //! A fluid, and the list of fluids, as text.
 
 use super::numbers::{percent, si, temperature};
-use super::sheet::{Sheet, Style};
+use super::sheet::{Sheet, Style, sentence};
 use crate::physical::fluids::CATALOGUE;
 use crate::physical::quantity::DisplayUnit;
 use crate::question::FluidReport;
@@ -47,7 +47,7 @@ pub fn fluid_text(report: &FluidReport, style: Style) -> String {
     }
     sheet.item("source", &report.source);
     for caution in &report.cautions {
-        sheet.item("beware", caution);
+        sheet.item("beware", &sentence(caution));
     }
     sheet.finish()
 }

@@ -102,6 +102,14 @@ impl Sheet {
     }
 }
 
+/// The text as a sentence: with a capital and a full stop.
+pub(super) fn sentence(text: &str) -> String {
+    let mut rest = text.chars();
+    let first = rest.next().map(|first| first.to_uppercase().to_string()).unwrap_or_default();
+    let end = if text.ends_with(['.', '?', '!']) { "" } else { "." };
+    format!("{first}{}{end}", rest.as_str())
+}
+
 /// The paragraph in lines of at most `width` characters, broken at spaces; longer words stay whole.
 fn wrapped(paragraph: &str, width: usize) -> Vec<String> {
     let mut lines = vec![String::new()];

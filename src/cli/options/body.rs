@@ -13,7 +13,7 @@ use crate::cli::Failure;
 #[command(next_help_heading = "The body")]
 pub struct BodyOptions {
     /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh)
-    #[arg(value_name = "BODY")]
+    #[arg(value_name = "BODY", help_heading = None::<&str>)]
     pub body: String,
 
     /// The unit of a surface file's coordinates, such as `um`; files don't tell, and it is never guessed

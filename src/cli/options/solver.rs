@@ -1,13 +1,11 @@
 //! How accurately, and for study how.
 
-use std::num::NonZeroUsize;
-
 use clap::{Args, ValueEnum};
 use slowmote::physical::quantity::parse_fraction;
 use slowmote::stokes::solve::{Factor, Request};
 use slowmote::surface::Geometry;
 
-use super::values::memory;
+use super::values::{memory, time};
 use crate::cli::{Failure, machine::memory_limit};
 
 /// A relative accuracy beyond this says nothing.
@@ -18,6 +16,9 @@ const TIGHTEST_ACCURACY: f64 = 1e-10;
 
 /// More triangles than this are a typing mistake on any machine.
 const MOST_ELEMENTS: usize = 10_000_000;
+
+/// More threads than any machine this runs on has.
+const MOST_THREADS: i64 = 1024;
 
 /// What is asked of the solver.
 #[derive(Debug, Clone, Args)]
@@ -40,12 +41,16 @@ pub struct SolverOptions {
     pub factor: Option<FactorName>,
 
     /// Threads to work with [default: all]
-    #[arg(long, value_name = "N")]
-    pub threads: Option<NonZeroUsize>,
+    #[arg(long, value_name = "N", value_parser = clap::value_parser!(u16).range(1..=MOST_THREADS))]
+    pub threads: Option<u16>,
 
     /// Memory that the matrix may take, such as `4GB` [default: a share of what is free]
     #[arg(long, value_name = "SIZE", value_parser = memory)]
     pub memory: Option<u64>,
+
+    /// Time to spend at most, such as `30s` or `10min`: no finer mesh is begun that would take longer
+    #[arg(long, value_name = "T", default_value = "2min", value_parser = time)]
+    pub time: f64,
 }
 
 /// The geometry of the triangles.
@@ -79,6 +84,7 @@ impl SolverOptions {
                 FactorName::Cholesky => Factor::Cholesky,
             }),
             memory_limit: self.memory.unwrap_or_else(memory_limit),
+            time_limit_s: self.time,
             ..Request::default()
         }
     }
@@ -99,7 +105,7 @@ impl SolverOptions {
     pub fn start_threads(&self) -> Result<(), Failure> {
         let Some(threads) = self.threads else { return Ok(()) };
         rayon::ThreadPoolBuilder::new()
-            .num_threads(threads.get())
+            .num_threads(usize::from(threads))
             .build_global()
             .map_err(|error| Failure::of(&error).during(format!("{threads} threads can't be started")))
     }

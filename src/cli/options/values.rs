@@ -1,6 +1,6 @@
 //! How single values are read; what they say when they can't be is part of the usage error.
 
-use slowmote::physical::quantity::{Dimension, Quantity};
+use slowmote::physical::quantity::{Dimension, Quantity, parse_time};
 use slowmote::surface::Point;
 
 /// Makes a parser for clap of one that fails with a displayable error.
@@ -48,6 +48,12 @@ pub fn place(text: &str) -> Result<Point, String> {
         *coordinate = length.value_si();
     }
     Ok(place)
+}
+
+/// A time to wait, s.
+pub fn time(text: &str) -> Result<f64, String> {
+    let time = parse_time(text).and_then(|time| time.positive()).map_err(|error| error.to_string())?;
+    Ok(time.value_si())
 }
 
 /// A size of memory, bytes: `4GB`, `512MiB`.

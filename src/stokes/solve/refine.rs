@@ -1,5 +1,7 @@
 //! The solve itself, on one surface and on ever finer ones until the error is small enough.
 
+use std::time::Instant;
+
 use super::dense::Factored;
 use super::{Factor, Observer, Request, Solution, SolveError, Stage, Statistics, estimate, levels};
 use crate::stokes::quadrature::{Instructions, PairRules};
@@ -12,6 +14,12 @@ const CHOLESKY_FROM: usize = 1000;
 
 /// Next mesh is chosen for this share of the wanted error, so that one more step is usually the last.
 const AIM: f64 = 0.6;
+
+/// Macro triangles from which on the first mesh is the macro triangles themselves.
+const RESOLVED_FROM: usize = 200;
+
+/// The cost grows like this power of the cuts: four for the pairs; the factorisation (six) is small until late.
+const COST_POWER: i32 = 4;
 
 /// Most that the number of cuts grows in one step: beyond, the observed order is not to be trusted.
 const LARGEST_STEP: f64 = 2.0;
@@ -35,13 +43,16 @@ pub fn resistance(
         return resistance_of_panels(panels, reference, request, observer);
     }
     let mut request = request.clone();
-    let mut cuts = 2;
+    let begin = Instant::now();
+    // A body of many macro triangles is already resolved by them; a shape of a few is not.
+    let mut cuts = if blueprint.triangles.len() > RESOLVED_FROM { 1 } else { 2 };
     let mut best: Option<Solution> = None;
     loop {
         let panels = blueprint.subdivide(cuts, request.geometry);
         if best.is_some() && single_layer::bytes_needed(3 * panels.node_count) > request.memory_limit {
             break;
         }
+        let began = Instant::now();
         let solution = match resistance_of_panels(panels.clone(), reference, &request, observer) {
             // The matrix of a very thin body is so nearly indefinite that only finer quadrature keeps it positive.
             Err(SolveError::NotPositiveDefinite { .. }) if request.rules.is_none() => {
@@ -57,8 +68,12 @@ pub fn resistance(
             break;
         }
         let growth = (error / (AIM * request.accuracy)).powf(1.0 / order).min(LARGEST_STEP);
-        let next = (cuts as f64 * growth).ceil() as usize;
-        cuts = next.next_multiple_of(2).max(cuts + 2);
+        let next = ((cuts as f64 * growth).ceil() as usize).next_multiple_of(2).max(cuts + 1);
+        let expected = began.elapsed().as_secs_f64() * (next as f64 / cuts as f64).powi(COST_POWER);
+        if begin.elapsed().as_secs_f64() + expected > request.time_limit_s {
+            break;
+        }
+        cuts = next;
     }
     // The loop ends with a solution: the first pass always makes one.
     best.map(|mut solution| {

@@ -25,6 +25,9 @@ pub struct Request {
     pub factor: Option<Factor>,
     /// Most memory the matrix may take, in bytes.
     pub memory_limit: u64,
+    /// Most time to spend, in seconds: no finer mesh is begun whose solution is expected to end later. What is begun is
+    /// always finished.
+    pub time_limit_s: f64,
     /// Quadrature of close pairs; `None` for what the accuracy asks for.
     pub rules: Option<PairRules>,
     /// Factor on the shift that fixes the null space; for studies.
@@ -39,6 +42,7 @@ impl Default for Request {
             geometry: Geometry::Exact,
             factor: None,
             memory_limit: 4 << 30,
+            time_limit_s: f64::INFINITY,
             rules: None,
             shift: 1.0,
         }
