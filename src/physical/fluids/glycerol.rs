@@ -104,11 +104,11 @@ impl Model for Glycerol {
     }
 
     fn description(&self) -> String {
-        let percent = 100.0 * self.mass_fraction;
+        let by_mass = 100.0 * self.mass_fraction;
         match self.volume_fraction {
-            None => format!("glycerol in water, {percent:.4} % by mass"),
+            None => format!("glycerol in water, {} by mass", percent(self.mass_fraction)),
             Some(volume) => format!(
-                "glycerol in water, {percent:.2} % by mass, from {:.4} % by volume of the pure liquids at {MEASURING_OUT_C} degC before mixing",
+                "glycerol in water, {by_mass:.2} % by mass, from {:.4} % by volume of the pure liquids at {MEASURING_OUT_C} degC before mixing",
                 100.0 * volume
             ),
         }

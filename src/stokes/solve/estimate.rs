@@ -13,7 +13,7 @@ use super::RelativeError;
 const RATIO_BOUNDS: [f64; 2] = [1.6, 8.0];
 
 /// The ratio that is assumed where only one coarser space is known.
-const UNKNOWN_RATIO: f64 = 2.0;
+const UNKNOWN_RATIO: f64 = 1.75;
 
 /// Factor on the extrapolated remainder.
 const SAFETY: f64 = 1.5;

@@ -67,7 +67,7 @@ pub struct Solution {
 #[non_exhaustive]
 pub enum SolveError {
     /// The matrix does not fit.
-    #[error("{unknowns} unknowns need {needed} bytes of memory, and {available} are available")]
+    #[error("{unknowns} unknowns need {:.1} GB of memory, and {:.1} GB are available", *needed as f64 / 1e9, *available as f64 / 1e9)]
     TooLarge {
         /// Unknowns of the system.
         unknowns: usize,

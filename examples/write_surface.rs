@@ -1,0 +1,65 @@
+//! Writes a named shape as a surface file of flat triangles, or one of the polyhedra below.
+//!
+//! ```text
+//! cargo run --release --example write_surface -- sphere:10 320 bead.stl
+//! cargo run --release --example write_surface -- bracket 0 bracket.stl
+//! ```
+//!
+//! The first argument is a shape in metres or in any length unit the program knows; the file is in the unit that is
+//! written (surface files carry none), so `sphere:10um` gives a file in micrometres.
+
+use std::error::Error;
+use std::path::Path;
+
+use slowmote::surface::shapes::Shape;
+use slowmote::surface::{Geometry, Point, TriangleMesh, write_surface};
+
+fn main() -> Result<(), Box<dyn Error>> {
+    let arguments = std::env::args().skip(1).collect::<Vec<_>>();
+    let [shape, triangles, path] = arguments.as_slice() else {
+        return Err("usage: write_surface SHAPE TRIANGLES FILE".into());
+    };
+    write_surface(&mesh(shape, triangles.parse()?)?, Path::new(path))?;
+    Ok(())
+}
+
+/// The mesh, in micrometres.
+fn mesh(shape: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error>> {
+    match shape {
+        "block" => extruded(&[[0.0, 0.0], [12.0, 0.0], [12.0, 8.0], [0.0, 8.0]], 5.0),
+        "bracket" => extruded(&[[0.0, 0.0], [20.0, 0.0], [20.0, 6.0], [6.0, 6.0], [6.0, 16.0], [0.0, 16.0]], 8.0),
+        name => facets_of(name, triangles),
+    }
+}
+
+fn facets_of(name: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error>> {
+    const MICROMETRE: f64 = 1e-6;
+    let blueprint = Shape::parse(name)?.blueprint();
+    let panels = blueprint.subdivide(blueprint.cuts_for(triangles), Geometry::Flat);
+    let mut vertices = vec![Point::zeros(); panels.vertex_count];
+    for panel in &panels.panels {
+        for (vertex, corner) in panel.vertices.iter().zip(panel.patch.corners()) {
+            vertices[*vertex] = corner / MICROMETRE;
+        }
+    }
+    let facets = panels.panels.iter().map(|panel| panel.vertices).collect();
+    Ok(TriangleMesh::new(vertices, facets)?)
+}
+
+/// A polygon in the x-y plane, corners counter-clockwise and all of them seen from corner 0, drawn out along z.
+fn extruded(outline: &[[f64; 2]], height: f64) -> Result<TriangleMesh, Box<dyn Error>> {
+    let count = outline.len();
+    let at = |z: f64| outline.iter().map(move |[x, y]| Point::new(*x, *y, z));
+    let vertices = at(0.0).chain(at(height)).collect();
+    let mut facets = Vec::new();
+    for k in 1..count - 1 {
+        facets.push([0, k + 1, k]);
+        facets.push([count, count + k, count + k + 1]);
+    }
+    for k in 0..count {
+        let next = (k + 1) % count;
+        facets.push([k, next, count + next]);
+        facets.push([k, count + next, count + k]);
+    }
+    Ok(TriangleMesh::new(vertices, facets)?)
+}
