@@ -91,6 +91,10 @@ fn failure(error: &DragError) -> Failure {
         DragError::Solve { source: SolveError::TooLarge { .. }, .. } => {
             failure.hint("ask for less with --accuracy or --elements, or allow more with --memory")
         }
+        DragError::Solve { source: SolveError::NotPositiveDefinite { .. }, .. } => failure.hint(
+            "pieces that touch or cross each other can't be solved, nor bodies some hundred times as wide as thick: look at \
+             the surface, or try a tighter --accuracy, which integrates more finely",
+        ),
         _ => failure.hint(
             "try another --elements, and look at the surface: pieces that touch or cross each other can't be solved",
         ),

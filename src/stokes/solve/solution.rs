@@ -67,7 +67,7 @@ pub struct Solution {
 #[non_exhaustive]
 pub enum SolveError {
     /// The matrix does not fit.
-    #[error("{unknowns} unknowns need {:.1} GB of memory, and {:.1} GB are available", *needed as f64 / 1e9, *available as f64 / 1e9)]
+    #[error("{unknowns} unknowns need {} of memory, and {} are allowed", memory(*needed), memory(*available))]
     TooLarge {
         /// Unknowns of the system.
         unknowns: usize,
@@ -104,4 +104,12 @@ pub enum SolveError {
         /// Column of the matrix.
         column: usize,
     },
+}
+
+/// A size of memory as people read it.
+fn memory(bytes: u64) -> String {
+    match bytes {
+        0..1_000_000_000 => format!("{:.0} MB", bytes as f64 / 1e6),
+        _ => format!("{:.1} GB", bytes as f64 / 1e9),
+    }
 }
