@@ -59,7 +59,7 @@ fn bodies_that_are_none() {
     slowmote("drag rod:1x2um").refuses(1, &["error: "]);
     slowmote("drag spere:10um").refuses(1, &["spere", "sphere", "hint: "]);
     slowmote("drag nothing").refuses(1, &["`nothing` is neither a shape nor a file", ".stl"]);
-    slowmote("drag cases.json").refuses(1, &["cases.json is a case file"]);
+    slowmote("drag cases.json").refuses(1, &["the case file cases.json can't be read"]);
     slowmote("drag sphere:10um --unit um").refuses(1, &["`--unit um` says nothing", "leave"]);
     run(["drag", ""]).refuses(1, &["neither a shape nor a file"]);
 }

@@ -7,6 +7,7 @@ use slowmote::question::{DragAnswer, DragError, DragQuestion, Verdict};
 use slowmote::show::{Assumed, drag_text};
 use slowmote::stokes::solve::SolveError;
 
+use super::case::{Filled, filled};
 use super::options::{BodyOptions, FluidOptions, MotionOptions, OutputOptions, SolverOptions};
 use super::output::Output;
 use super::progress::Progress;
@@ -43,32 +44,37 @@ impl DragArguments {
     /// # Errors
     /// Input that can't be used, a solve that failed, or an output that can't be written.
     pub fn run(&self) -> Result<Exit, Failure> {
-        let fluid = self.fluid.fluid()?;
-        let body = self.body.body(self.solver.geometry())?;
+        let Filled { body: body_options, fluid: fluid_options, name } = filled(&self.body, &self.fluid)?;
+        let fluid = fluid_options.fluid()?;
+        let mut body = body_options.body(self.solver.geometry())?;
+        if let Some(name) = name {
+            body.name = name;
+        }
         let output = Output::open(&self.output, &[Path::new(&self.body.body)])?;
         self.solver.start_threads()?;
         let question = DragQuestion {
             body,
             fluid,
-            placing: self.body.placing(),
-            reference: self.body.reference,
+            placing: body_options.placing(),
+            reference: body_options.reference,
             motion: self.motion.motion(),
             request: self.solver.request(),
         };
         let progress = Progress::new(self.output.quiet);
         let answer = question.answer(&progress).map_err(|error| failure(&error))?;
         drop(progress);
-        output.write(&answer, |style| drag_text(&answer, &self.assumed(), style))?;
+        let assumed = self.assumed(&body_options, &fluid_options);
+        output.write(&answer, |style| drag_text(&answer, &assumed, style))?;
         Ok(self.exit(&answer))
     }
 
-    fn assumed(&self) -> Assumed {
+    fn assumed(&self, body: &BodyOptions, fluid: &FluidOptions) -> Assumed {
         Assumed {
-            fluid: self.fluid.fluid.is_none(),
-            temperature: self.fluid.temperature.is_none(),
+            fluid: fluid.fluid.is_none(),
+            temperature: fluid.temperature.is_none(),
             direction: self.motion.speed.is_some() && self.motion.along.is_none(),
             axis: self.motion.spin.is_some() && self.motion.about.is_none(),
-            file_unit: self.body.unit.clone(),
+            file_unit: body.unit.clone(),
         }
     }
 

@@ -40,6 +40,12 @@ impl Failure {
         self
     }
 
+    /// Adds why, in a sentence.
+    pub fn because(mut self, cause: impl Into<String>) -> Self {
+        self.causes.push(cause.into());
+        self
+    }
+
     /// Adds what the user can do next.
     pub fn hint(mut self, hint: impl Into<String>) -> Self {
         self.hints.push(hint.into());

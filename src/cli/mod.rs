@@ -5,6 +5,7 @@
 
 mod arguments;
 mod bug;
+mod case;
 mod drag;
 mod exit;
 mod failure;

@@ -7,6 +7,7 @@ mod answer;
 mod body;
 mod body_source;
 mod budget;
+mod case;
 mod cautions;
 mod drag;
 mod fluid;
@@ -21,6 +22,7 @@ pub use answer::{
 pub use body::{Body, Extent, KnownSize};
 pub use body_source::{BodyError, LengthUnit};
 pub use budget::InputUncertainty;
+pub use case::{Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};

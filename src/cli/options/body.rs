@@ -1,9 +1,11 @@
 //! The body, how it stands, and the point that torques are about.
 
+use std::path::Path;
+
 use clap::Args;
 use slowmote::physical::quantity::{parse_angle, parse_length};
-use slowmote::question::{Body, LengthUnit, Placing, Turn};
-use slowmote::surface::{Geometry, Point};
+use slowmote::question::{Body, CaseBody, LengthUnit, Placing, Turn};
+use slowmote::surface::{Geometry, Point, SurfaceFormat};
 
 use super::values::{direction, place};
 use crate::cli::Failure;
@@ -12,7 +14,7 @@ use crate::cli::Failure;
 #[derive(Debug, Clone, Args)]
 #[command(next_help_heading = "The body")]
 pub struct BodyOptions {
-    /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh)
+    /// A shape such as `rod:12x2um`, a surface file (.stl .obj .ply .off .msh), or a case file (.json)
     #[arg(value_name = "BODY", help_heading = None::<&str>)]
     pub body: String,
 
@@ -34,6 +36,31 @@ pub struct BodyOptions {
 }
 
 impl BodyOptions {
+    /// Takes the body of a case, and what else the case says of it where no option does.
+    ///
+    /// # Errors
+    /// A unit, turn or place that can't be read.
+    pub fn fill(&mut self, body: &CaseBody, case: &Path) -> Result<(), Failure> {
+        let wrong = |error: String| {
+            Failure::new(format!("the case file {} can't be used", case.display()))
+                .because(error)
+                .hint("its texts are read as the options of the same name")
+        };
+        let beside = case.parent().unwrap_or(Path::new("")).join(&body.surface);
+        let is_file = SurfaceFormat::of_path(Path::new(&body.surface)).is_some();
+        self.body = if is_file { beside.to_string_lossy().into_owned() } else { body.surface.clone() };
+        if let (None, Some(unit)) = (&self.unit, &body.unit) {
+            self.unit = Some(length_unit(unit).map_err(wrong)?);
+        }
+        if self.turn.is_empty() {
+            self.turn = body.turn.iter().map(|text| turn(text)).collect::<Result<_, _>>().map_err(wrong)?;
+        }
+        if let (None, Some(at)) = (self.at, &body.at) {
+            self.at = Some(place(&at.join(",")).map_err(wrong)?);
+        }
+        Ok(())
+    }
+
     /// Makes or reads the body, with panels of this geometry or of the one that fits it.
     ///
     /// # Errors
