@@ -36,14 +36,7 @@ fn facets_of(name: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error
     const MICROMETRE: f64 = 1e-6;
     let blueprint = Shape::parse(name)?.blueprint();
     let panels = blueprint.subdivide(blueprint.cuts_for(triangles), Geometry::Flat);
-    let mut vertices = vec![Point::zeros(); panels.vertex_count];
-    for panel in &panels.panels {
-        for (vertex, corner) in panel.vertices.iter().zip(panel.patch.corners()) {
-            vertices[*vertex] = corner / MICROMETRE;
-        }
-    }
-    let facets = panels.panels.iter().map(|panel| panel.vertices).collect();
-    Ok(TriangleMesh::new(vertices, facets)?)
+    Ok(TriangleMesh::of_panels(&panels, 1.0 / MICROMETRE))
 }
 
 /// A polygon in the x-y plane, corners counter-clockwise and all of them seen from corner 0, drawn out along z.

@@ -4,6 +4,7 @@ use clap::{Parser, Subcommand};
 
 use super::drag::DragArguments;
 use super::fluid::FluidArguments;
+use super::surface::SurfaceArguments;
 use super::{Exit, Failure};
 
 /// Drag, torque, mobility and diffusion of small bodies in viscous fluids.
@@ -16,6 +17,7 @@ Examples:
   slowmote drag sphere:10um
   slowmote drag bead.stl --unit mm --fluid silicone-oil:1000cSt --temperature 22degC
   slowmote drag rod:12x2um --turn 30deg@y --speed 50um/s --along x --json
+  slowmote surface scan.ply --unit um
   slowmote fluid glycerol:60% --temperature 25degC
 
 Exit codes:
@@ -35,6 +37,8 @@ pub struct Arguments {
 pub enum Command {
     /// How hard the fluid holds a body: resistance, mobility, diffusion, and the drag of a motion
     Drag(Box<DragArguments>),
+    /// What a surface file is like, what is wrong with it, and whether the solver takes it; mends and writes surfaces
+    Surface(SurfaceArguments),
     /// Viscosity and density of a fluid, and how well they are known; without a name, the list of fluids
     Fluid(FluidArguments),
 }
@@ -47,6 +51,7 @@ impl Arguments {
     pub fn run(&self) -> Result<Exit, Failure> {
         match &self.command {
             Command::Drag(arguments) => arguments.run(),
+            Command::Surface(arguments) => arguments.run(),
             Command::Fluid(arguments) => arguments.run(),
         }
     }

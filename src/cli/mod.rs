@@ -14,6 +14,7 @@ mod machine;
 mod options;
 mod output;
 mod progress;
+mod surface;
 
 pub use arguments::Arguments;
 pub use bug::catch_bugs;

@@ -31,7 +31,7 @@ impl Output {
         let json = match &options.json {
             None => Json::None,
             Some(path) if path.as_os_str() == OutputOptions::STDOUT => Json::Stdout,
-            Some(path) => Json::File(NewFile::create(path, inputs)?),
+            Some(path) => Json::File(NewFile::create("JSON", path, inputs)?),
         };
         Ok(Self { quiet: options.quiet, json })
     }
@@ -78,7 +78,7 @@ pub fn stdout_style() -> Style {
 }
 
 /// A file that appears under its name only when it is whole.
-struct NewFile {
+pub struct NewFile {
     path: PathBuf,
     /// Where it is written until then; none for a device, which is written directly.
     draft: Option<PathBuf>,
@@ -86,11 +86,17 @@ struct NewFile {
 }
 
 impl NewFile {
-    fn create(path: &Path, inputs: &[&Path]) -> Result<Self, Failure> {
-        let refuse = |why: String| Failure::new(format!("the JSON file {} can't be written", path.display())).hint(why);
+    /// Opens a draft of the file, so that what forbids writing it shows before the work. `what` names its kind; `inputs` are
+    /// files that must not be overwritten.
+    ///
+    /// # Errors
+    /// It can't be written, or is one of the inputs.
+    pub fn create(what: &str, path: &Path, inputs: &[&Path]) -> Result<Self, Failure> {
+        let refuse =
+            |why: String| Failure::new(format!("the {what} file {} can't be written", path.display())).hint(why);
         let failed = |error: io::Error| {
             Failure::of(&error)
-                .during(format!("the JSON file {} can't be written", path.display()))
+                .during(format!("the {what} file {} can't be written", path.display()))
                 .hint("check that its folder exists and may be written to")
         };
         let known = fs::canonicalize(path).ok();
@@ -119,7 +125,11 @@ impl NewFile {
         Ok(Self { path, draft: Some(draft), file })
     }
 
-    fn finish(mut self, bytes: &[u8]) -> Result<(), Failure> {
+    /// Writes it whole, under its own name.
+    ///
+    /// # Errors
+    /// The system refuses, as on a full disk.
+    pub fn finish(mut self, bytes: &[u8]) -> Result<(), Failure> {
         let written = self.file.write_all(bytes).and_then(|()| self.file.flush());
         let moved = written.and_then(|()| match &self.draft {
             Some(draft) => fs::rename(draft, &self.path),
@@ -130,9 +140,7 @@ impl NewFile {
                 self.draft = None;
                 Ok(())
             }
-            Err(error) => {
-                Err(Failure::of(&error).during(format!("the JSON file {} can't be written", self.path.display())))
-            }
+            Err(error) => Err(Failure::of(&error).during(format!("{} can't be written", self.path.display()))),
         }
     }
 }

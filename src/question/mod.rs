@@ -12,6 +12,7 @@ mod cautions;
 mod drag;
 mod fluid;
 mod placing;
+mod surface;
 mod validity;
 
 pub use answer::{
@@ -26,4 +27,5 @@ pub use case::{Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};
+pub use surface::{HoleReport, SURFACE_SCHEMA, ShellReport, Surface, SurfaceReport};
 pub use validity::{Regime, SPEED_LIMIT_REYNOLDS};

@@ -8,9 +8,11 @@ mod fluid_text;
 mod json;
 mod numbers;
 mod sheet;
+mod surface_text;
 mod tensor_text;
 
 pub use drag_text::{Assumed, drag_text};
 pub use fluid_text::{fluid_catalogue_text, fluid_text};
 pub use json::to_json;
 pub use sheet::Style;
+pub use surface_text::surface_text;

@@ -79,7 +79,8 @@ impl BodyOptions {
     }
 }
 
-fn length_unit(text: &str) -> Result<LengthUnit, String> {
+/// A unit of length such as `um`.
+pub fn length_unit(text: &str) -> Result<LengthUnit, String> {
     let one = parse_length(&format!("1{text}")).map_err(|_| format!("`{text}` is no unit of length such as `um`"))?;
     if one.uncertainty_si() > 0.0 || text.starts_with(|c: char| c.is_ascii_digit() || c == '.') {
         return Err(format!("`{text}` is no unit of length such as `um`"));

@@ -7,7 +7,7 @@ mod output;
 mod solver;
 mod values;
 
-pub use body::BodyOptions;
+pub use body::{BodyOptions, length_unit};
 pub use fluid::{FluidOptions, fluid_of};
 pub use motion::MotionOptions;
 pub use output::OutputOptions;

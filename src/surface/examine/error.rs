@@ -148,16 +148,14 @@ impl SurfaceError {
             }
             Self::Empty => "export the boundary of the body as triangles",
             Self::DegenerateFacet { .. } | Self::DuplicateFacet { .. } => {
-                "mending drops such facets (option drop_bad_facets); look at the result before using it"
+                "mending drops such facets; look at the result before using it"
             }
-            Self::Open { .. } => {
-                "mending closes small holes (option close_holes); a large one needs the missing part, exported again"
-            }
+            Self::Open { .. } => "mending closes small holes; a large one needs the missing part, exported again",
             Self::MixedOrientation { .. } | Self::InsideOut => {
-                "mending turns facets outward (option orient); check that the body, not its surroundings, is meant"
+                "mending turns facets outward; check that the body, not its surroundings, is meant"
             }
             Self::Nested { .. } => {
-                "the fluid does not reach inner pieces: mending drops them (option drop_inner_shells), or export the outer skin alone"
+                "the fluid does not reach inner pieces: mending drops them, or export the outer skin alone"
             }
             Self::NonManifoldEdge { .. } | Self::PinchedVertex { .. } => {
                 "separate the parts that touch there, or unite them in the modelling program, and export again"

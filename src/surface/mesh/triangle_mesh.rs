@@ -1,6 +1,6 @@
 //! The mesh itself, with its invariants: indices in range, coordinates finite, one group a facet or none at all.
 
-use crate::surface::Point;
+use crate::surface::{Panels, Point};
 
 /// Triangles over shared vertices, in the coordinates of the file they came from.
 ///
@@ -44,6 +44,18 @@ pub enum MeshError {
 }
 
 impl TriangleMesh {
+    /// The corners of panels as a mesh of flat triangles, times `scale`.
+    pub fn of_panels(panels: &Panels, scale: f64) -> Self {
+        let mut vertices = vec![Point::zeros(); panels.vertex_count];
+        for panel in &panels.panels {
+            for (vertex, corner) in panel.vertices.iter().zip(panel.patch.corners()) {
+                vertices[*vertex] = corner * scale;
+            }
+        }
+        let facets = panels.panels.iter().map(|panel| panel.vertices).collect();
+        Self { vertices, facets, groups: Vec::new() }
+    }
+
     /// A mesh of these vertices and facets.
     ///
     /// # Errors
