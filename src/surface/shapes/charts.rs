@@ -83,52 +83,6 @@ impl Chart for StraightSide {
     }
 }
 
-/// The side of an ellipsoid around its local x axis: `x = frame (-cos q_x, sin q_x d)`, `d` the direction of
-/// `(q_y, q_z)`.
-///
-/// Unlike [`Radial`], it keeps rings at a constant angle `q_x` however few places go around them, so strips may be narrow.
-#[derive(Debug, Clone)]
-pub(super) struct Spindle {
-    /// Linear map of the unit sphere.
-    pub frame: Matrix3<f64>,
-}
-
-impl Chart for Spindle {
-    fn at(&self, q: &Point) -> (Point, Matrix3<f64>) {
-        let across = q.y.hypot(q.z);
-        let (cos, sin) = (q.y / across, q.z / across);
-        let (sin_t, cos_t) = q.x.sin_cos();
-        let around = Point::new(0.0, -sin, cos) * (sin_t / across);
-        let by_t = Point::new(sin_t, cos_t * cos, cos_t * sin);
-        let local = Point::new(-cos_t, sin_t * cos, sin_t * sin);
-        (self.frame * local, self.frame * Matrix3::from_columns(&[by_t, -sin * around, cos * around]))
-    }
-}
-
-/// A piece of an ellipsoid around a pole on its local x axis: an [`ArcTriangle`] of the plane `x = 0` with its tip at the
-/// origin, lifted to the unit sphere and mapped by `frame`.
-#[derive(Debug, Clone)]
-pub(super) struct Dome {
-    /// The triangle, well inside the unit circle.
-    pub arc: ArcTriangle,
-    /// Linear map of the unit sphere.
-    pub frame: Matrix3<f64>,
-    /// Whether the pole is the one at positive x.
-    pub forward: bool,
-}
-
-impl Chart for Dome {
-    fn at(&self, q: &Point) -> (Point, Matrix3<f64>) {
-        let (mut local, mut jacobian) = self.arc.at(q);
-        let sign = if self.forward { 1.0 } else { -1.0 };
-        let height = sign * (1.0 - local.norm_squared()).sqrt();
-        let slope = -jacobian.tr_mul(&local) / height;
-        jacobian.set_row(0, &slope.transpose());
-        local.x = height;
-        (self.frame * local, self.frame * jacobian)
-    }
-}
-
 /// A plane triangle whose edge 0-1 is bent to the circle around `centre` through both ends.
 ///
 /// Chart coordinates are barycentric. With the corners `P_k`, `e_k = P_k - centre` and `s = (1 + q_1 - q_0)/2`,

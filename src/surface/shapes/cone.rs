@@ -6,25 +6,15 @@ use super::charts::StraightSide;
 use super::error::{ShapeError, check_aspect, check_length};
 use super::flat_end::FlatEnd;
 use super::layout::{Layout, Piece, Rim, on_circle};
+use super::stations::{Widening, widening};
 use super::{ExactMeasure, Form};
 use crate::surface::{Blueprint, Grading, Point};
 
+/// Triangles around the axis.
+const AROUND: usize = 6;
+
 /// Height of the graded strip at the rim, in radii of the base, and at most in heights of the cone.
 const END_STRIP: [f64; 2] = [0.75, 0.5];
-
-/// Up to this ratio of height to base radius one fan, graded towards the apex, reaches from the strip to the apex.
-const BLUNT: f64 = 4.0;
-
-/// Beyond this ratio of height to base radius four triangles around are enough, as for a long cylinder.
-const LONG: f64 = 12.0;
-
-/// Longest triangle along a slender cone, in its own widths, and the least part of the distance to the apex that a step
-/// leaves: needles are let off with longer triangles.
-const LONGEST: f64 = 12.0;
-const LEAST_REMAINDER: f64 = 0.7;
-
-/// Part of a slender cone's height that is left to the fan at the apex; hardly any force acts there.
-const TIP: f64 = 0.05;
 
 /// A circular cone, pointing along +x.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -62,9 +52,13 @@ impl Form for Cone {
         let mut layout = Layout::new();
         let chart = Some(layout.chart(StraightSide { radius: 0.75 * radius, slope: -radius / height }));
         let side = Piece { chart, face: 1, shell: 0 };
-        let places = self.places();
-        let count = self.count_around();
-        let rings = (0..places.len()).map(|k| layout.ring(count, k % 2 == 1)).collect::<Vec<_>>();
+        let strip = (END_STRIP[0] * radius).min(END_STRIP[1] * height);
+        let steps = Widening { first: 3.0 * strip, ratio: 2.2, widest: 0.25 * height };
+        // Heights of the rings above the base; the last step is the fan to the apex.
+        let inner = widening(height - strip, steps);
+        let mut places = vec![0.0];
+        places.extend(inner.iter().take(inner.len() - 1).map(|s| strip + s));
+        let rings = (0..places.len()).map(|k| layout.ring(AROUND, k % 2 == 1)).collect::<Vec<_>>();
         let at = |k: usize| {
             let above = places[k];
             move |turns: f64| on_circle(base + above, radius * (1.0 - above / height), turns)
@@ -75,9 +69,7 @@ impl Form for Cone {
             layout.strip(side, (&rings[k], &at(k)), (&rings[k + 1], &at(k + 1)), rim);
         }
         let apex = (layout.vertex(), Point::new(0.75 * height, 0.0, 0.0));
-        // Grading would make needles of a slender cone's last triangles, which are long already.
-        let grading = if self.is_blunt() { Grading::Vertex } else { Grading::Plain };
-        layout.fan_ahead(side, (&rings[last], &at(last)), apex, grading);
+        layout.fan_ahead(side, (&rings[last], &at(last)), apex, Grading::Vertex);
         FlatEnd { x: base, radius, forward: false, face: 0 }.lay(&mut layout, &rings[0]);
         layout.finish()
     }
@@ -86,35 +78,5 @@ impl Form for Cone {
         let (height, radius) = (self.height, 0.5 * self.diameter);
         let area = PI * radius * (radius + height.hypot(radius));
         ExactMeasure { volume: PI / 3.0 * radius * radius * height, area: Some(area) }
-    }
-}
-
-impl Cone {
-    fn is_blunt(&self) -> bool {
-        self.height <= BLUNT * 0.5 * self.diameter
-    }
-
-    fn count_around(&self) -> usize {
-        if self.height > LONG * 0.5 * self.diameter { 4 } else { 6 }
-    }
-
-    /// Heights of the side's rings above the base, from the rim to the foot of the fan at the apex.
-    fn places(&self) -> Vec<f64> {
-        let (height, radius) = (self.height, 0.5 * self.diameter);
-        let strip = (END_STRIP[0] * radius).min(END_STRIP[1] * height);
-        let mut places = vec![0.0, strip];
-        if self.is_blunt() {
-            return places;
-        }
-        let width = 2.0 * PI / self.count_around() as f64 * radius / height;
-        // A step takes the part p of the distance to the apex; its length over the width at its narrow end is p/(1 - p)/width.
-        let part = (LONGEST * width / (1.0 + LONGEST * width)).max(1.0 - LEAST_REMAINDER);
-        let mut above = strip;
-        while height - above > TIP * height {
-            let widened = 2.5 * strip + 1.2 * (above - strip);
-            above += widened.min(part * (height - above));
-            places.push(above);
-        }
-        places
     }
 }

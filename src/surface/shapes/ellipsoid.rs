@@ -10,44 +10,31 @@ use std::f64::consts::{FRAC_PI_2, PI};
 use nalgebra::Matrix3;
 
 use super::carlson;
-use super::charts::{ArcTriangle, Dome, Radial, Spindle};
+use super::charts::Radial;
 use super::error::{ShapeError, check_aspect, check_length};
-use super::layout::{Layout, Piece, Rim, on_circle};
+use super::layout::{Layout, Piece, on_circle};
 use super::sphere::icosahedral;
-use super::stations::{Widening, widening, widening_from_both_ends};
+use super::stations::{Widening, widening};
 use super::{ExactMeasure, Form};
-use crate::surface::{Blueprint, Grading, Point};
+use crate::surface::{Blueprint, Point};
 
 /// Up to this ratio of the longest to the shortest axis the scaled icosahedron resolves the traction.
 const ROUND_ASPECT: f64 = 4.0;
 
-/// First ring at a plate's rim, in units of the peak's width there.
+/// First ring at a rim or tip, in units of the peak's width there.
 ///
 /// The force on a strip of the rim goes like the strip's latitude, so little of it depends on how the peak's top is
-/// resolved. Two cuts of a 100:1 plate give the drag within 1e-4 and the torque within 1e-3 with this and the next
-/// number; narrower rings cost panels a thousand times longer than wide, for rims of plates are sharply curved.
-const PLATE_RING: f64 = 9.5;
+/// resolved, and wider rings spare panels a thousand times longer than wide: rims of plates are sharply curved.
+const FIRST_RING: f64 = 6.0;
 
-/// Ratio of the widths of neighbouring rings of a plate.
-const PLATE_RATIO: f64 = 5.0;
+/// Ratio of the widths of neighbouring rings.
+const RING_RATIO: f64 = 3.0;
 
 /// Latitude (rad) at which the rings of a plate end and the fan around the pole begins.
 const PLATE_CAP_LATITUDE: f64 = 0.8;
 
-/// First step at a needle's tip, or at the edge of a blade, in units of the peak's width there.
-const NEEDLE_RING: f64 = 6.0;
-
-/// Ratio of the widths of neighbouring rings of a needle.
-const NEEDLE_RATIO: f64 = 3.0;
-
-/// Largest angle (rad) of the dome at a needle's tip: it must stay well away from the equator.
-const DOME_ANGLE: f64 = 0.8;
-
-/// Longest triangle along a needle, in its own widths.
-const LONGEST: f64 = 12.0;
-
-/// Steps (rad) along a needle need not be narrower than this: eight of them reach from the tip to the middle.
-const NEEDLE_STEP: f64 = 0.2;
+/// Widest step (rad) along a needle; six of them reach from the tip to the middle.
+const NEEDLE_STEP: f64 = 0.3;
 
 /// An ellipsoid with its axes along x, y and z.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -101,59 +88,19 @@ impl Form for Ellipsoid {
     }
 }
 
-/// Rings around the longest axis: domes at the tips, and a side between them.
+/// Rings around the longest axis.
 fn needle(semi_axes: [f64; 3], order: [usize; 2], slender: f64, section: f64) -> Blueprint {
     let tip = 1.0 / slender;
+    let steps = Widening { first: FIRST_RING * tip, ratio: RING_RATIO, widest: NEEDLE_STEP.max(6.0 * tip) };
+    let side = widening(FRAC_PI_2, steps);
     let around = Around::new(section, if slender > 8.0 { 4 } else { 6 });
-    let first = (NEEDLE_RING * tip).min(DOME_ANGLE);
-    let widest = (LONGEST * 2.0 * PI / around.count as f64 * tip).max(NEEDLE_STEP);
-    let angles = widening_from_both_ends(FRAC_PI_2, Widening { first, ratio: NEEDLE_RATIO, widest });
-    let angles = angles[1..angles.len() - 1].iter().map(|angle| angle + FRAC_PI_2).collect::<Vec<_>>();
-    let frame = local_frame(semi_axes, order);
-    let mut layout = Layout::new();
-    let side = Piece { chart: Some(layout.chart(Spindle { frame })), face: 0, shell: 0 };
-    let rings = (0..angles.len()).map(|k| layout.ring(around.count, k % 2 == 1)).collect::<Vec<_>>();
-    let at = |k: usize| {
-        let angle = angles[k];
-        move |turns: f64| {
-            let (along, across) = around.direction(turns);
-            Point::new(angle, along, across)
-        }
-    };
-    let last = angles.len() - 1;
-    for k in 0..last {
-        layout.strip(side, (&rings[k], &at(k)), (&rings[k + 1], &at(k + 1)), Rim::None);
-    }
-    for (k, forward) in [(0, false), (last, true)] {
-        let radius = angles[k].sin();
-        let pole = layout.vertex();
-        for pair in rings[k].pairs() {
-            // Counter-clockwise seen from the fluid, which is on the other side at the other end.
-            let [start, end] = if forward { pair } else { [pair[1], pair[0]] };
-            let [p0, p1] = [start, end].map(|(_, turns)| {
-                let (along, across) = around.direction(turns);
-                radius * Point::new(0.0, along, across)
-            });
-            let arc = ArcTriangle { corners: [p0, p1, Point::zeros()], centre: Point::zeros() };
-            let chart = Some(layout.chart(Dome { arc, frame, forward }));
-            let corners = [(start.0, Point::x()), (end.0, Point::y()), (pole, Point::z())];
-            layout.triangle(Piece { chart, ..side }, corners, Grading::Plain);
-        }
-    }
-    layout.finish()
-}
-
-/// The linear map of the unit sphere whose x axis goes to the first and whose y axis goes to the second axis in `order`.
-fn local_frame(semi_axes: [f64; 3], order: [usize; 2]) -> Matrix3<f64> {
-    let unit = |k: usize| Point::from_fn(|i, _| if i == k { 1.0 } else { 0.0 });
-    let (pole, first) = (unit(order[0]), unit(order[1]));
-    Matrix3::from_diagonal(&semi_axes.into()) * Matrix3::from_columns(&[pole, first, pole.cross(&first)])
+    rings(semi_axes, order, around, &side[1..])
 }
 
 /// Rings around the shortest axis.
 fn plate(semi_axes: [f64; 3], order: [usize; 2], outline: f64, flat: f64) -> Blueprint {
     let rim = 1.0 / (flat * outline.sqrt());
-    let steps = Widening { first: PLATE_RING * rim, ratio: PLATE_RATIO, widest: f64::INFINITY };
+    let steps = Widening { first: FIRST_RING * rim, ratio: RING_RATIO, widest: PLATE_CAP_LATITUDE };
     let latitudes = widening(PLATE_CAP_LATITUDE, steps);
     let side = latitudes.iter().rev().map(|latitude| FRAC_PI_2 - latitude).collect::<Vec<_>>();
     rings(semi_axes, order, Around::new(outline, 6), &side)
@@ -173,8 +120,8 @@ impl Around {
         if ratio < 2.0 {
             return Self { count: least, squeeze: 1.0 };
         }
-        let first = NEEDLE_RING / ratio;
-        let quarter = if first > 0.5 { 2.0 } else { 2.0 + (1.0 / first).ln() / NEEDLE_RATIO.ln() };
+        let first = FIRST_RING / ratio;
+        let quarter = if first > 0.5 { 2.0 } else { 2.0 + (1.0 / first).ln() / RING_RATIO.ln() };
         let count = 4 * quarter.round() as usize;
         let squeeze = first / (2.0 * PI / count as f64).tan();
         Self { count, squeeze: squeeze.min(1.0) }
@@ -192,7 +139,10 @@ impl Around {
 ///
 /// `order` names the polar axis and the one from which angles around it count.
 fn rings(semi_axes: [f64; 3], order: [usize; 2], around: Around, side: &[f64]) -> Blueprint {
-    let frame = local_frame(semi_axes, order);
+    let unit = |k: usize| Point::from_fn(|i, _| if i == k { 1.0 } else { 0.0 });
+    let (pole, first) = (unit(order[0]), unit(order[1]));
+    let turn = Matrix3::from_columns(&[pole, first, pole.cross(&first)]);
+    let frame = Matrix3::from_diagonal(&semi_axes.into()) * turn;
     let mirrored = side.iter().rev().skip(1).map(|angle| PI - angle);
     // Along the axis, so from the far pole.
     let stations = side.iter().copied().chain(mirrored).map(|angle| PI - angle).collect::<Vec<_>>();

@@ -40,11 +40,6 @@ impl Ring {
         self.staggered
     }
 
-    /// Neighbouring vertices in order, each with its place in turns.
-    pub fn pairs(&self) -> impl Iterator<Item = [(usize, f64); 2]> + '_ {
-        (0..self.count()).map(|j| [self.at(j), self.at(j + 1)])
-    }
-
     /// The macro vertex `index` (any integer from 0; it wraps) and its place in turns, which does not wrap.
     fn at(&self, index: usize) -> (usize, f64) {
         let count = self.vertices.len();

@@ -11,9 +11,6 @@ pub(super) struct Widening {
     pub widest: f64,
 }
 
-/// Part of a step that may be spread over the others before another step is spent.
-const TOLERANCE: f64 = 0.25;
-
 /// Cuts `[0, length]` into steps that start near `first` at 0 and widen; the ends are included.
 ///
 /// The steps are those of the continuous width `w(s) = min(first' + ln(ratio) s, widest)`, shrunk together so that a
@@ -36,7 +33,8 @@ pub(super) fn widening(length: f64, steps: Widening) -> Vec<f64> {
         }
     };
     let total = count_at(length);
-    let whole = (total - TOLERANCE).ceil().max(1.0);
+    // A step may come out a quarter wider than asked before another one is spent.
+    let whole = (total - 0.25).ceil().max(1.0);
     let mut places = (0..whole as usize).map(|k| place_of(total * k as f64 / whole)).collect::<Vec<_>>();
     places.push(length);
     places
