@@ -113,6 +113,15 @@ fn cube_graded_towards_its_edges() {
     assert!((2.9..3.7).contains(&order), "order {order}");
 }
 
+/// The value extrapolated from the coarser spaces, on the mesh of 1458 unknowns that the default accuracy takes.
+#[test]
+fn cube_extrapolated() {
+    let solution = to_accuracy("cube:1m", 5e-3);
+    assert!(solution.statistics.unknowns <= 1500);
+    let [drag, torque] = errors(&solution, [CUBE[0], CUBE[0], CUBE[0], CUBE[1], CUBE[1], CUBE[1]]);
+    assert!(drag < 2e-4 && torque < 2e-4, "{drag:e} {torque:e}");
+}
+
 /// Goldman, Cox & Brenner (1966); bispherical coordinates at the limit of touching, twelve digits: drag a sphere along the
 /// line of centres, and torque of the rigid pair about it. The reference is for spheres of radius 1.
 #[test]

@@ -43,6 +43,21 @@ pub(super) fn relative_error(fine: &Matrix6<f64>, coarser: &[Matrix6<f64>], quad
     (error, force.min(torque))
 }
 
+/// The least ratio of changes that the extrapolated value rests on: third order. A smaller one would be a larger
+/// correction, resting on a sequence that has not settled.
+const EXTRAPOLATION_RATIO: f64 = 8.0;
+
+/// The value that the sequence tends to: `R + (R - R_coarse)/(q - 1)` with the observed ratio `q` of the slower of force and
+/// torque, but never less than [`EXTRAPOLATION_RATIO`]. Symmetric and positive as `R` is, since the change is. Unchanged
+/// where only one coarser space is known.
+pub(super) fn extrapolated(fine: &Matrix6<f64>, coarser: &[Matrix6<f64>]) -> Matrix6<f64> {
+    let [first, second, ..] = coarser else { return *fine };
+    let (now, before) = (change(fine, fine, first), change(fine, first, second));
+    let ratio = (before[0] / now[0]).min(before[1] / now[1]);
+    let ratio = if ratio.is_finite() { ratio.max(EXTRAPOLATION_RATIO) } else { EXTRAPOLATION_RATIO };
+    fine + (fine - first) / (ratio - 1.0)
+}
+
 /// Changes from `coarse` to `fine` relative to `whole`: worst direction of force and torque, and coupling.
 fn change(whole: &Matrix6<f64>, fine: &Matrix6<f64>, coarse: &Matrix6<f64>) -> [f64; 3] {
     let difference = fine - coarse;

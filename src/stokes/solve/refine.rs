@@ -78,6 +78,8 @@ pub fn resistance(
     // The loop ends with a solution: the first pass always makes one.
     best.map(|mut solution| {
         solution.reached = solution.error.worst() <= request.accuracy;
+        // On a fixed mesh the plain Galerkin value stands, which is a lower bound; here the best value is asked for.
+        solution.resistance.matrix = estimate::extrapolated(&solution.resistance.matrix, &solution.coarser);
         solution
     })
     .ok_or(SolveError::IllConditioned { condition: f64::INFINITY })
