@@ -1,12 +1,12 @@
 //! Writes a named shape as a surface file of flat triangles, or one of the polyhedra below.
 //!
 //! ```text
-//! cargo run --release --example write_surface -- sphere:10 320 bead.stl
-//! cargo run --release --example write_surface -- bracket 0 bracket.stl
+//! cargo run --release --example write_surface -- sphere:10um 320 bead.stl
+//! cargo run --release --example write_surface -- bracket 20 bracket.stl
 //! ```
 //!
-//! The first argument is a shape in metres or in any length unit the program knows; the file is in the unit that is
-//! written (surface files carry none), so `sphere:10um` gives a file in micrometres.
+//! The first argument is a shape in any length unit the program knows, or `block`, `bracket` or `pin`; the file is in
+//! micrometres, and doesn't say so, since surface files carry no unit. The second is about how many facets.
 
 use std::error::Error;
 use std::path::Path;
@@ -28,6 +28,7 @@ fn mesh(shape: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error>> {
     match shape {
         "block" => extruded(&[[0.0, 0.0], [12.0, 0.0], [12.0, 8.0], [0.0, 8.0]], 5.0),
         "bracket" => extruded(&[[0.0, 0.0], [20.0, 0.0], [20.0, 6.0], [6.0, 6.0], [6.0, 16.0], [0.0, 16.0]], 8.0),
+        "pin" => extruded(&polygon(triangles / 4 + 1, 2.0), 12.0),
         name => facets_of(name, triangles),
     }
 }
@@ -37,6 +38,16 @@ fn facets_of(name: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error
     let blueprint = Shape::parse(name)?.blueprint();
     let panels = blueprint.subdivide(blueprint.cuts_for(triangles), Geometry::Flat);
     Ok(TriangleMesh::of_panels(&panels, 1.0 / MICROMETRE))
+}
+
+/// The corners of a regular polygon, as a CAD program stands it in for a circle of that radius.
+fn polygon(count: usize, radius: f64) -> Vec<[f64; 2]> {
+    (0..count)
+        .map(|k| {
+            let (sine, cosine) = (std::f64::consts::TAU * k as f64 / count as f64).sin_cos();
+            [radius * cosine, radius * sine]
+        })
+        .collect()
 }
 
 /// A polygon in the x-y plane, corners counter-clockwise and all of them seen from corner 0, drawn out along z.
