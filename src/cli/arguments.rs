@@ -4,6 +4,7 @@ use clap::{Parser, Subcommand};
 
 use super::drag::DragArguments;
 use super::fluid::FluidArguments;
+use super::regime::RegimeArguments;
 use super::surface::SurfaceArguments;
 use super::{Exit, Failure};
 
@@ -17,6 +18,7 @@ Examples:
   slowmote drag sphere:10um
   slowmote drag bead.stl --unit mm --fluid silicone-oil:1000cSt --temperature 22degC
   slowmote drag rod:12x2um --turn 30deg@y --speed 50um/s --along x --json
+  slowmote regime --size 10um --speed 1mm/s --in tube:diameter=50um --flow tube:mean=2mm/s
   slowmote surface scan.ply --unit um
   slowmote fluid glycerol:60% --temperature 25degC
 
@@ -37,6 +39,8 @@ pub struct Arguments {
 pub enum Command {
     /// How hard the fluid holds a body: resistance, mobility, diffusion, and the drag of a motion
     Drag(Box<DragArguments>),
+    /// Whether creeping flow holds, without solving: every number that can be told from what is known, with its verdict
+    Regime(Box<RegimeArguments>),
     /// What a surface file is like, what is wrong with it, and whether the solver takes it; mends and writes surfaces
     Surface(SurfaceArguments),
     /// Viscosity and density of a fluid, and how well they are known; without a name, the list of fluids
@@ -51,6 +55,7 @@ impl Arguments {
     pub fn run(&self) -> Result<Exit, Failure> {
         match &self.command {
             Command::Drag(arguments) => arguments.run(),
+            Command::Regime(arguments) => arguments.run(),
             Command::Surface(arguments) => arguments.run(),
             Command::Fluid(arguments) => arguments.run(),
         }

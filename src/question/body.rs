@@ -104,6 +104,25 @@ impl Extent {
         Self { measure, points: self.points.iter().map(|point| placement.apply(point)).collect() }
     }
 
+    /// Radius of a sphere around its points, about the centre of its box or its centroid, whichever is smaller.
+    pub(super) fn enclosing_radius(&self) -> f64 {
+        let around =
+            |centre: Point| self.points.iter().fold(0.0_f64, |largest, point| largest.max((point - centre).norm()));
+        around(self.box_centre()).min(around(self.measure.centroid))
+    }
+
+    /// Half axes of an ellipsoid around its points, in the proportions of its box.
+    pub(super) fn enclosing_ellipsoid(&self) -> [f64; 3] {
+        let (half, centre) = (0.5 * self.size(), self.box_centre());
+        let scale = |point: &Point| (point - centre).component_div(&half).norm();
+        (half * self.points.iter().map(scale).fold(0.0, f64::max)).into()
+    }
+
+    fn box_centre(&self) -> Point {
+        let low = self.points.iter().fold(Point::repeat(f64::INFINITY), |low, point| low.inf(point));
+        low + 0.5 * self.size()
+    }
+
     /// Largest distance of the surface from an axis through a point; from the point itself if the axis is zero.
     pub fn distance_from_axis(&self, through: &Point, axis: &Point) -> f64 {
         let axis = axis.try_normalize(0.0).unwrap_or_else(Point::zeros);

@@ -11,8 +11,18 @@ const FEWEST_MOLECULES_M: f64 = 5e-9;
 /// A half length, m, beyond which a unit was mistaken more often than not. A choice of this program.
 const LARGEST_USUAL_M: f64 = 0.1;
 
+const BLOOD: &str = "Blood differs from donor to donor. Nothing here replaces tests on the device or the sample: for medical use \
+                     follow the local rules and the judgement of licensed practitioners.";
+
+const BIOLOGICAL: &str = "Handle cells and blood products by your laboratory's rules of biological safety.";
+
+const SOFT: &str = "Cells are soft and differ from each other: a rigid body of one size stands for them here.";
+
+const NO_MEDICAL_ADVICE: &str = "Nothing here replaces tests on the device or the sample: for medical use follow the local rules and the \
+                                 judgement of licensed practitioners.";
+
 /// The cautions for a body of this name and half length (m) in this fluid, the fluid's own first.
-pub(super) fn cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
+pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
     let mut cautions = fluid.cautions().to_vec();
     if half_length_m < FEWEST_MOLECULES_M {
         cautions.push(
@@ -25,7 +35,6 @@ pub(super) fn cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Ve
         cautions.push("This is a large body for creeping flow: is its unit right?".to_owned());
     }
     let red_cell = body_name.starts_with(RED_CELL);
-    let fluid_is = |name: &str| fluid.name().split(':').next() == Some(name);
     if red_cell {
         cautions.push(
             "A red cell is soft, and its shape follows the flow and the medium: the answer is that of a rigid body of \
@@ -33,15 +42,30 @@ pub(super) fn cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Ve
                 .to_owned(),
         );
     }
-    if red_cell || fluid_is("plasma") {
-        cautions.push(
-            "Blood differs from donor to donor. Nothing here replaces tests on the device or the sample: for medical \
-             use follow the local rules and the judgement of licensed practitioners."
-                .to_owned(),
-        );
+    if red_cell || is_blood(fluid) {
+        cautions.push(BLOOD.to_owned());
     }
-    if red_cell || fluid_is("culture-medium") || fluid_is("plasma") {
-        cautions.push("Handle cells and blood products by your laboratory's rules of biological safety.".to_owned());
+    if red_cell || is(fluid, "culture-medium") || is_blood(fluid) {
+        cautions.push(BIOLOGICAL.to_owned());
     }
     cautions
+}
+
+/// The cautions for a fluid without a body.
+pub(super) fn fluid_cautions(fluid: &Fluid) -> Vec<String> {
+    body_cautions("", FEWEST_MOLECULES_M, fluid)
+}
+
+/// The cautions for a body that lives, whatever it is called.
+pub(super) fn living_cautions() -> Vec<String> {
+    vec![SOFT.to_owned(), BIOLOGICAL.to_owned(), NO_MEDICAL_ADVICE.to_owned()]
+}
+
+/// Whether it is blood or a part of it.
+pub(super) fn is_blood(fluid: &Fluid) -> bool {
+    is(fluid, "plasma")
+}
+
+fn is(fluid: &Fluid, name: &str) -> bool {
+    fluid.name().split(':').next() == Some(name)
 }

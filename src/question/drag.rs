@@ -15,7 +15,7 @@ use super::answer::{
 };
 use super::body::{Body, Extent};
 use super::budget::{InputUncertainty, TORQUE_POWER, force_total, input_shares, torque_total};
-use super::cautions::cautions;
+use super::cautions::body_cautions;
 use super::placing::Placing;
 use super::validity::Regime;
 use crate::physical::Fluid;
@@ -174,7 +174,7 @@ impl DragQuestion {
             motion: self.motion.map(|motion| motion_answer(&motion, &resistance, &relative_error, &regime)),
             flow: None,
             validity: regime.validity(),
-            cautions: cautions(&self.body.name, length, &self.fluid),
+            cautions: body_cautions(&self.body.name, length, &self.fluid),
             solver: solver_answer(&solution, start.elapsed().as_secs_f64()),
             relative_error,
         })

@@ -4,6 +4,7 @@
 //! told with the facts that a message needs.
 
 mod answer;
+mod bands;
 mod body;
 mod body_source;
 mod budget;
@@ -12,6 +13,7 @@ mod cautions;
 mod drag;
 mod fluid;
 mod placing;
+mod regime;
 mod surface;
 mod validity;
 
@@ -20,6 +22,7 @@ pub use answer::{
     NumberVerdict, PrincipalDrag, RelativeErrorAnswer, ResistanceBlocks, SolverAnswer, Tensor, Validity, Vector,
     Verdict,
 };
+pub use bands::SPEED_LIMIT_REYNOLDS;
 pub use body::{Body, Extent, KnownSize};
 pub use body_source::{BodyError, LengthUnit};
 pub use budget::InputUncertainty;
@@ -27,5 +30,9 @@ pub use case::{Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};
+pub use regime::{
+    ChannelAnswer, Concern, Flow, Given, Input, REGIME_SCHEMA, RegimeAnswer, RegimeBody, RegimeBodyAnswer, RegimeError,
+    RegimeMotion, RegimeNumber, RegimeQuestion, RegimeValidity, Section, Untold,
+};
 pub use surface::{HoleReport, SURFACE_SCHEMA, ShellReport, Surface, SurfaceReport};
-pub use validity::{Regime, SPEED_LIMIT_REYNOLDS};
+pub use validity::Regime;

@@ -21,41 +21,12 @@
 use std::f64::consts::PI;
 
 use super::answer::{NumberVerdict, Validity, Verdict};
+use super::bands::{
+    BLURRED_PECLET, Bands, CORRECTABLE_REYNOLDS, KNUDSEN, PARTICLE_REYNOLDS, SPEED_LIMIT_REYNOLDS, TURNING_REYNOLDS,
+    slip_factor, sphere_curve_excess,
+};
 use crate::stokes::rigid::{Motion, Resistance};
 use crate::surface::Point;
-
-/// Below this Re_h inertia adds less than 1 % to the drag (3/16 x 0.05 = 0.94 %); the speed limit is set by it.
-pub const SPEED_LIMIT_REYNOLDS: f64 = 0.05;
-
-/// Up to this Re_h the first-order correction is good to 2 % of the drag of a sphere.
-const CORRECTABLE_REYNOLDS: f64 = 0.5;
-
-/// Beyond this Re_h the first order is off by more than 5 %, and wakes differ from shape to shape.
-const LARGEST_REYNOLDS: f64 = 1.0;
-
-/// Below this rotational Reynolds number a turning body drives no secondary flow to speak of. Common practice, no
-/// source; a sphere's torque is then raised by less than 1e-4, from memory.
-const CREEPING_ROTATION_REYNOLDS: f64 = 0.1;
-
-/// Beyond this rotational Reynolds number secondary flow is as strong as the rotation itself. Common practice.
-const LARGEST_ROTATION_REYNOLDS: f64 = 1.0;
-
-/// Below this Knudsen number slip changes the drag by less than 1.2 %.
-const CONTINUUM_KNUDSEN: f64 = 0.01;
-
-/// Up to this Knudsen number the slip factor of a sphere serves for bodies that are not too long or flat.
-const SLIP_KNUDSEN: f64 = 0.1;
-
-/// Beyond this Knudsen number the drag in a continuum is more than twice what a gas exerts.
-const LARGEST_KNUDSEN: f64 = 1.0;
-
-/// Slip factor `1 + Kn [A + B exp(-C / Kn)]`: J. H. Kim et al., J. Res. Natl. Inst. Stand. Technol. 110 (2005) 31.
-const SLIP_A: f64 = 1.165;
-const SLIP_B: f64 = 0.483;
-const SLIP_C: f64 = 0.997;
-
-/// Below this Peclet number a path is visibly blurred by diffusion, and below 1 ruled by it. Common practice.
-const BLURRED_PECLET: f64 = 100.0;
 
 /// What the verdict is made from; SI units throughout.
 #[derive(Debug, Clone)]
@@ -172,15 +143,14 @@ impl Regime {
     fn particle_reynolds(&self, translation: &Translation) -> NumberVerdict {
         let Translation { reynolds, excess, .. } = *translation;
         let percent = 100.0 * excess;
-        let bands = [SPEED_LIMIT_REYNOLDS, CORRECTABLE_REYNOLDS, LARGEST_REYNOLDS];
-        let verdict = band(reynolds, bands);
+        let verdict = PARTICLE_REYNOLDS.verdict(reynolds);
         let meaning = match verdict {
             Verdict::Creeping => "inertia adds less than 1 % to the drag".to_owned(),
             Verdict::Corrected => format!("inertia adds about {percent:.1} % to the drag; take the corrected force"),
             Verdict::Doubtful => format!("inertia adds 5 to 20 % to the drag; {percent:.0} % is the first order only"),
             Verdict::Outside => "inertia is as strong as viscosity; the Stokes drag is far too low".to_owned(),
         };
-        named("particle Reynolds number", reynolds, SPEED_LIMIT_REYNOLDS, verdict, meaning)
+        named("particle Reynolds number", reynolds, PARTICLE_REYNOLDS, meaning)
     }
 
     fn rotation_reynolds(&self) -> Option<NumberVerdict> {
@@ -189,20 +159,17 @@ impl Regime {
             return None;
         }
         let value = self.density_kg_m3 * rate * self.radius_of_turning_m.powi(2) / self.viscosity_pa_s;
-        // There is no correction to give here, so that band is empty.
-        let bands = [CREEPING_ROTATION_REYNOLDS, CREEPING_ROTATION_REYNOLDS, LARGEST_ROTATION_REYNOLDS];
-        let verdict = band(value, bands);
-        let meaning = match verdict {
+        let meaning = match TURNING_REYNOLDS.verdict(value) {
             Verdict::Creeping | Verdict::Corrected => "the turning body drives no secondary flow that matters",
             Verdict::Doubtful => "the turning body begins to drive a secondary flow, which adds to the torque",
             Verdict::Outside => "the turning body flings fluid outwards; the Stokes torque is too low",
         };
-        Some(named("rotation Reynolds number", value, CREEPING_ROTATION_REYNOLDS, verdict, meaning.to_owned()))
+        Some(named("rotation Reynolds number", value, TURNING_REYNOLDS, meaning.to_owned()))
     }
 
     fn knudsen(&self) -> Option<(NumberVerdict, Option<String>)> {
         let value = self.mean_free_path_m? / self.hydrodynamic_radius_m;
-        let verdict = band(value, [CONTINUUM_KNUDSEN, SLIP_KNUDSEN, LARGEST_KNUDSEN]);
+        let verdict = KNUDSEN.verdict(value);
         let meaning = match verdict {
             Verdict::Creeping => "the gas sticks to the body as a liquid would",
             Verdict::Corrected => "the gas slips a little along the body; divide drags by the slip factor",
@@ -210,13 +177,13 @@ impl Regime {
             Verdict::Outside => "molecules hit the body one by one; the flow of a continuum is no answer",
         };
         let note = (verdict > Verdict::Creeping).then(|| {
-            let slip = 1.0 + value * (SLIP_A + SLIP_B * (-SLIP_C / value).exp());
+            let slip = slip_factor(value);
             format!(
                 "The drags are those without slip. In this gas divide them by {slip:.3}, and multiply mobilities and \
                  diffusion by it (slip factor of the sphere of equal hydrodynamic radius, Kim et al. 2005)."
             )
         });
-        Some((named("Knudsen number", value, CONTINUUM_KNUDSEN, verdict, meaning.to_owned()), note))
+        Some((named("Knudsen number", value, KNUDSEN, meaning.to_owned()), note))
     }
 
     fn diffusion_note(&self, speed: f64) -> Option<String> {
@@ -263,33 +230,8 @@ fn translation_note(translation: &Translation) -> Vec<String> {
     notes
 }
 
-/// Excess of a sphere's drag over Stokes's on the standard curve, for Re from 0.01 to 260.
-///
-/// Source: Clift, Grace and Weber (1978), table 5.2; the first branch is Oseen's.
-fn sphere_curve_excess(reynolds: f64) -> f64 {
-    if reynolds < 0.01 {
-        3.0 / 16.0 * reynolds
-    } else if reynolds <= 20.0 {
-        0.1315 * reynolds.powf(0.82 - 0.05 * reynolds.log10())
-    } else {
-        0.1935 * reynolds.powf(0.6305)
-    }
-}
-
-/// The verdict on a value by three rising thresholds.
-fn band(value: f64, [creeping, corrected, doubtful]: [f64; 3]) -> Verdict {
-    if value < creeping {
-        Verdict::Creeping
-    } else if value < corrected {
-        Verdict::Corrected
-    } else if value <= doubtful {
-        Verdict::Doubtful
-    } else {
-        Verdict::Outside
-    }
-}
-
-fn named(name: &str, value: f64, threshold: f64, verdict: Verdict, meaning: String) -> NumberVerdict {
+fn named(name: &str, value: f64, bands: Bands, meaning: String) -> NumberVerdict {
+    let (threshold, verdict) = (bands.creeping, bands.verdict(value));
     NumberVerdict { name: name.to_owned(), value, threshold, verdict, meaning }
 }
 
@@ -407,15 +349,5 @@ mod tests {
         assert!(validity.notes.iter().any(|note| note.contains("1.157")));
         regime.hydrodynamic_radius_m = 5e-6;
         assert_eq!(regime.validity().verdict, Some(Verdict::Corrected));
-    }
-
-    #[test]
-    fn the_standard_curve_of_the_sphere() {
-        // Clift, Grace and Weber 1978: 0.19 % at Re 0.01, 1.8 % at 0.1, 4.7 % at 0.3, 7.4 % at 0.5, 13 % at 1.
-        for (reynolds, percent, digits) in
-            [(0.01, 0.19, 0.005), (0.1, 1.8, 0.05), (0.3, 4.7, 0.05), (0.5, 7.4, 0.05), (1.0, 13.0, 0.5)]
-        {
-            assert!((100.0 * sphere_curve_excess(reynolds) - percent).abs() <= digits, "{reynolds}");
-        }
     }
 }

@@ -36,6 +36,18 @@ pub struct Assumed {
     pub file_unit: Option<LengthUnit>,
 }
 
+impl Assumed {
+    /// What was taken for granted of the fluid, to be put behind it.
+    pub(super) fn fluid_words(&self) -> &'static str {
+        match (self.fluid, self.temperature) {
+            (true, true) => "; taken as water at 20 degC, since no fluid was given",
+            (true, false) => "; taken as water, since no fluid was given",
+            (false, true) => "; taken at 20 degC, since no temperature was given",
+            (false, false) => "",
+        }
+    }
+}
+
 /// The whole answer as text, for eyes.
 pub fn drag_text(answer: &DragAnswer, assumed: &Assumed, style: Style) -> String {
     let mut sheet = Sheet::new(style);
@@ -106,12 +118,7 @@ fn body_and_fluid(sheet: &mut Sheet, answer: &DragAnswer, assumed: &Assumed) {
         percent(answer.fluid.relative_uncertainty),
         si(answer.fluid.density_kg_m3, DisplayUnit::DENSITY, FLUID_DIGITS),
     );
-    match (assumed.fluid, assumed.temperature) {
-        (true, true) => fluid += "; taken as water at 20 degC, since no fluid was given",
-        (true, false) => fluid += "; taken as water, since no fluid was given",
-        (false, true) => fluid += "; taken at 20 degC, since no temperature was given",
-        (false, false) => {}
-    }
+    fluid += assumed.fluid_words();
     sheet.item("fluid", &fluid);
     sheet.item("around it", "open fluid, no walls");
 }

@@ -88,10 +88,22 @@ impl Sheet {
         }
     }
 
+    /// A paragraph whose label is a judgement, set off by its tone.
+    pub(super) fn judged_item(&mut self, tone: Tone, label: &str, paragraph: &str) {
+        let room = self.style.width.saturating_sub(MARGIN).max(20);
+        for (number, line) in wrapped(paragraph, room).iter().enumerate() {
+            if number == 0 { self.toned_line(tone, label, line) } else { self.line("", line) }
+        }
+    }
+
     /// A line that is not wrapped.
     pub(super) fn line(&mut self, label: &str, line: &str) {
+        self.toned_line(Tone::Label, label, line);
+    }
+
+    fn toned_line(&mut self, tone: Tone, label: &str, line: &str) {
         let padding = MARGIN.saturating_sub(LABEL_INDENT + label.chars().count()).max(1);
-        let label = if label.is_empty() { String::new() } else { self.style.set(Tone::Label, label) };
+        let label = if label.is_empty() { String::new() } else { self.style.set(tone, label) };
         let set = format!("{}{label}{}{line}", " ".repeat(LABEL_INDENT), " ".repeat(padding));
         self.text.push_str(set.trim_end());
         self.text.push('\n');

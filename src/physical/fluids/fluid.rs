@@ -19,6 +19,9 @@ const STRONG_SENSITIVITY_PER_K: f64 = 0.04;
 /// A stretch of nothing: temperatures that miss the end of a range only by rounding are inside it.
 const RANGE_SLACK_K: f64 = 1e-9;
 
+/// The name of a fluid without one.
+pub(super) const GIVEN_BY_NUMBERS: &str = "given by numbers";
+
 /// The temperature taken when none is given: 20 degC, without uncertainty.
 pub fn default_temperature() -> Quantity {
     Quantity::trusted(ZERO_CELSIUS_K + DEFAULT_TEMPERATURE_C, 0.0, Dimension::TEMPERATURE)
@@ -48,6 +51,7 @@ pub struct Fluid {
     pub(super) viscosity_budget: ErrorBudget,
     pub(super) density_budget: ErrorBudget,
     pub(super) viscosity_temperature_sensitivity_per_k: Option<f64>,
+    pub(super) density_temperature_sensitivity_per_k: Option<f64>,
     pub(super) validity_c: Option<(f64, f64)>,
     pub(super) mean_free_path_m: Option<f64>,
     pub(super) source: String,
@@ -112,6 +116,7 @@ impl Fluid {
             viscosity_budget,
             density_budget,
             viscosity_temperature_sensitivity_per_k: Some(viscosity_slope),
+            density_temperature_sensitivity_per_k: Some(density_slope),
             validity_c: Some((range.low_c, range.high_c)),
             mean_free_path_m: model.mean_free_path_m(temperature_c),
             source: model.source(),
@@ -122,6 +127,11 @@ impl Fluid {
     /// The specification that gives this fluid again, such as `glycerol:60%`, or `given by numbers`.
     pub fn name(&self) -> &str {
         &self.name
+    }
+
+    /// Whether its viscosity and density were given as numbers.
+    pub fn is_given_by_numbers(&self) -> bool {
+        self.name == GIVEN_BY_NUMBERS
     }
 
     /// What it is, in words.
@@ -197,6 +207,12 @@ impl Fluid {
     /// dln mu/dT, 1/K; none for a fluid given by numbers.
     pub fn viscosity_temperature_sensitivity_per_k(&self) -> Option<f64> {
         self.viscosity_temperature_sensitivity_per_k
+    }
+
+    /// Volumetric thermal expansion `-dln rho/dT`, 1/K, negative below water's densest point; none for a fluid given by
+    /// numbers.
+    pub fn thermal_expansion_per_k(&self) -> Option<f64> {
+        self.density_temperature_sensitivity_per_k.map(|slope| -slope)
     }
 
     /// Lowest and highest temperature described, degC; none for a fluid given by numbers.

@@ -2,7 +2,7 @@
 
 use super::bound::{Bound, BoundKind};
 use super::error::FluidError;
-use super::fluid::{Fluid, celsius};
+use super::fluid::{Fluid, GIVEN_BY_NUMBERS, celsius};
 use crate::physical::propagation::ErrorBudget;
 use crate::physical::quantity::{Dimension, Quantity, QuantityError, echo};
 
@@ -35,7 +35,7 @@ impl Fluid {
         let given = |quantity: Quantity| Bound::new(quantity.relative_uncertainty(), BoundKind::Given);
         let (viscosity_text, density_text) = (viscosity.to_text(DIGITS), density.to_text(DIGITS));
         Ok(Fluid {
-            name: "given by numbers".into(),
+            name: GIVEN_BY_NUMBERS.into(),
             description: format!("a fluid of viscosity {viscosity_text} and density {density_text}"),
             temperature,
             viscosity_pa_s: viscosity.value_si(),
@@ -45,6 +45,7 @@ impl Fluid {
             viscosity_budget: ErrorBudget::new().with("viscosity of the fluid", viscosity.relative_uncertainty()),
             density_budget: ErrorBudget::new().with("density of the fluid", density.relative_uncertainty()),
             viscosity_temperature_sensitivity_per_k: None,
+            density_temperature_sensitivity_per_k: None,
             validity_c: None,
             mean_free_path_m: None,
             source: "viscosity and density as given".into(),

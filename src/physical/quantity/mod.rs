@@ -17,7 +17,8 @@ pub use error::QuantityError;
 pub(crate) use error::echo;
 pub use list::parse_lengths;
 pub use parse::{
-    parse_angle, parse_angular_speed, parse_density, parse_force, parse_fraction, parse_length, parse_shear_rate,
-    parse_speed, parse_temperature, parse_time, parse_torque, parse_viscosity, parse_volume,
+    parse_acceleration, parse_angle, parse_angular_speed, parse_density, parse_flow_rate, parse_force, parse_fraction,
+    parse_frequency, parse_length, parse_pressure, parse_shear_rate, parse_speed, parse_surface_tension,
+    parse_temperature, parse_temperature_difference, parse_time, parse_torque, parse_viscosity, parse_volume,
 };
 pub use value::Quantity;

@@ -265,6 +265,18 @@ parsers! {
     parse_density: DENSITY;
     /// Reads an absolute temperature such as `25degC`; SI unit K.
     parse_temperature: TEMPERATURE;
+    /// Reads a difference of temperatures such as `2K`; SI unit K.
+    parse_temperature_difference: TEMPERATURE_DIFFERENCE;
+    /// Reads an acceleration such as `9.81m/s2`; SI unit m/s2.
+    parse_acceleration: ACCELERATION;
+    /// Reads a frequency in cycles such as `10Hz` or `10/s`; SI unit Hz.
+    parse_frequency: FREQUENCY;
+    /// Reads a volume flow rate such as `10uL/min`; SI unit m3/s.
+    parse_flow_rate: FLOW_RATE;
+    /// Reads a pressure, a stress or an elastic modulus such as `1kPa`; SI unit Pa.
+    parse_pressure: PRESSURE;
+    /// Reads a surface tension or the shear modulus of a membrane such as `5uN/m`; SI unit N/m.
+    parse_surface_tension: SURFACE_TENSION;
     /// Reads a pure number or a percentage such as `0.5%`; SI unit 1.
     parse_fraction: DIMENSIONLESS;
 }

@@ -1,4 +1,4 @@
-//! Carlson's symmetric elliptic integrals, for the area of ellipsoids.
+//! Carlson's symmetric elliptic integrals, for the area of ellipsoids and for bounds on the drag of bodies in them.
 //!
 //! Duplication algorithm of Carlson (1995), Numerical Algorithms 10, 13-26; series and definitions as in DLMF 19.36
 //! and 19.21. Relative error a few units of 1e-15.
@@ -10,7 +10,7 @@ const SPREAD: f64 = 2.5e-3;
 const MOST_STEPS: usize = 400;
 
 /// `R_F(x, y, z) = 1/2 int_0^inf dt / sqrt((t + x)(t + y)(t + z))`; arguments not negative, at most one zero.
-pub(super) fn r_f(x: f64, y: f64, z: f64) -> f64 {
+pub(crate) fn r_f(x: f64, y: f64, z: f64) -> f64 {
     let (mut x, mut y, mut z) = (x, y, z);
     for _ in 0..MOST_STEPS {
         let mean = (x + y + z) / 3.0;
@@ -27,7 +27,7 @@ pub(super) fn r_f(x: f64, y: f64, z: f64) -> f64 {
 }
 
 /// `R_D(x, y, z) = 3/2 int_0^inf dt / ((t + z) sqrt((t + x)(t + y)(t + z)))`; `z > 0`, `x + y > 0`.
-pub(super) fn r_d(x: f64, y: f64, z: f64) -> f64 {
+pub(crate) fn r_d(x: f64, y: f64, z: f64) -> f64 {
     let (mut x, mut y, mut z) = (x, y, z);
     let (mut sum, mut factor) = (0.0, 1.0);
     for _ in 0..MOST_STEPS {

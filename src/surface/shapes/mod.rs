@@ -1,6 +1,6 @@
 //! The named shapes.
 
-mod carlson;
+pub(crate) mod carlson;
 mod catalogue;
 mod charts;
 mod cone;

@@ -1,0 +1,258 @@
+//! `slowmote regime [BODY]`.
+
+use std::path::Path;
+
+use clap::Args;
+use slowmote::physical::quantity::{
+    parse_acceleration, parse_angular_speed, parse_density, parse_force, parse_fraction, parse_frequency,
+    parse_length, parse_pressure, parse_speed, parse_surface_tension, parse_temperature_difference,
+};
+use slowmote::physical::{Dimension, Material, Quantity, QuantityError};
+use slowmote::question::{Body, Given, Input, LengthUnit, RegimeBody, RegimeQuestion, Verdict};
+use slowmote::show::{Assumed, regime_text};
+
+use super::options::{
+    ChannelOption, FlowOption, FluidOptions, OutputOptions, centrifuge, channel, flow, length_unit, parse_with,
+};
+use super::output::Output;
+use super::{Exit, Failure};
+
+/// Options of `regime`.
+#[derive(Debug, Args)]
+#[command(after_help = "\
+Nothing is solved: a body of any shape is held between the sphere of its volume and what encloses it, and
+the worse end decides. Quantities may carry their uncertainty, as in 10±0.3um.
+
+Examples:
+  slowmote regime --size 10um --body-density 1.05g/mL
+  slowmote regime rod:12x2um --force 2pN --fluid glycerol:60%
+  slowmote regime --in duct:width=100um,height=40um,length=2cm --flow duct:rate=10uL/min
+  slowmote regime redcell:7.82um --material red-cell --fluid pbs --centrifuge g=1000")]
+pub struct RegimeArguments {
+    /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh); none for a channel alone
+    #[arg(value_name = "BODY", conflicts_with = "size")]
+    body: Option<String>,
+
+    /// Only the span of the body, such as `10um`: it is taken as a sphere of this diameter
+    #[arg(long, value_name = "LENGTH", value_parser = positive(parse_length), help_heading = BODY)]
+    size: Option<Quantity>,
+
+    /// The unit of a surface file's coordinates, such as `um`
+    #[arg(long, value_name = "UNIT", value_parser = length_unit, help_heading = BODY, requires = "body")]
+    unit: Option<LengthUnit>,
+
+    /// Density of the body, such as `1.05g/mL`
+    #[arg(long, value_name = "DENSITY", value_parser = positive(parse_density), help_heading = BODY)]
+    body_density: Option<Quantity>,
+
+    /// What the body is made of, such as `polystyrene`, for its usual density
+    #[arg(long, value_name = "NAME", help_heading = BODY, conflicts_with = "body_density")]
+    material: Option<String>,
+
+    /// Surface tension or shear modulus of a skin, such as `5uN/m`, or elastic modulus of a body, such as `1kPa`
+    #[arg(long, value_name = "STIFFNESS", value_parser = stiffness, help_heading = BODY)]
+    stiffness: Option<Quantity>,
+
+    /// Volume fraction of such bodies in the fluid, such as `2%`
+    #[arg(long, value_name = "FRACTION", value_parser = concentration, help_heading = BODY)]
+    concentration: Option<Quantity>,
+
+    /// Gap between the body and a wall, such as `200nm`
+    #[arg(long, value_name = "LENGTH", value_parser = positive(parse_length), help_heading = BODY)]
+    gap: Option<Quantity>,
+
+    /// Height of the roughness in the gap, such as `10nm`
+    #[arg(long, value_name = "LENGTH", value_parser = positive(parse_length), help_heading = BODY)]
+    roughness: Option<Quantity>,
+
+    #[command(flatten)]
+    fluid: FluidOptions,
+
+    /// Speed through the fluid, such as `50um/s`
+    #[arg(long, value_name = "SPEED", value_parser = positive(parse_speed), help_heading = MOTION)]
+    speed: Option<Quantity>,
+
+    /// Angular speed, such as `10/s` (radians a second) or `60rpm`
+    #[arg(long, value_name = "RATE", value_parser = positive(parse_angular_speed), help_heading = MOTION)]
+    spin: Option<Quantity>,
+
+    /// Force on the body, such as `2pN`
+    #[arg(long, value_name = "FORCE", value_parser = positive(parse_force), help_heading = MOTION)]
+    force: Option<Quantity>,
+
+    /// Acceleration that the body's weight comes from [default: 9.80665m/s2]
+    #[arg(long, value_name = "ACCELERATION", value_parser = gravity, help_heading = MOTION)]
+    gravity: Option<Quantity>,
+
+    /// A centrifuge: `g=1000`, or `rpm=3000,radius=80mm`
+    #[arg(long, value_name = "HOW", value_parser = centrifuge, help_heading = MOTION, conflicts_with = "gravity")]
+    centrifuge: Option<Quantity>,
+
+    /// Frequency of an oscillation of the body or the flow, such as `10Hz`
+    #[arg(long, value_name = "FREQUENCY", value_parser = frequency, help_heading = MOTION)]
+    frequency: Option<Quantity>,
+
+    /// A straight channel: `tube:diameter=50um`, `slot:height=20um` or `duct:width=100um,height=40um`; with `length=2cm`
+    /// and `bend-radius=5mm` if known
+    #[arg(long = "in", value_name = "CHANNEL", value_parser = channel, help_heading = CHANNEL)]
+    channel: Option<ChannelOption>,
+
+    /// The flow: `tube:mean=1mm/s` or `tube:rate=10uL/min` by the channel's name, or `shear:10/s` or `uniform:1mm/s`
+    /// without walls
+    #[arg(long, value_name = "FLOW", value_parser = flow, help_heading = CHANNEL)]
+    flow: Option<FlowOption>,
+
+    /// Difference of temperature across the channel or the chamber, such as `0.1K`, for thermal convection
+    #[arg(long, value_name = "DT", value_parser = temperature_difference, help_heading = CHANNEL)]
+    temperature_difference: Option<Quantity>,
+
+    /// Width of a chamber between its warm and its cold side, such as `1mm` [default: the channel's narrow side]
+    #[arg(long, value_name = "LENGTH", value_parser = positive(parse_length), help_heading = CHANNEL)]
+    chamber: Option<Quantity>,
+
+    #[command(flatten)]
+    output: OutputOptions,
+
+    /// Exit with code 4 if something is outside creeping flow
+    #[arg(long, help_heading = "Output")]
+    strict: bool,
+}
+
+const BODY: &str = "The body";
+const MOTION: &str = "What moves it";
+const CHANNEL: &str = "The channel and the flow";
+
+impl RegimeArguments {
+    /// Asks, shows, and tells how it ended.
+    ///
+    /// # Errors
+    /// Input that can't be used or does not fit together, or an output that can't be written.
+    pub fn run(&self) -> Result<Exit, Failure> {
+        let material = self.material.as_deref().map(known_material).transpose()?;
+        let question = RegimeQuestion {
+            fluid: self.fluid.fluid()?,
+            body: self.body()?,
+            material,
+            channel: self.channel.as_ref().map(|channel| channel.section),
+            flow: self.flow.as_ref().map(|flow| flow.flow),
+            centrifuge: self.centrifuge.is_some(),
+            given: self.given(material),
+        };
+        let answer = question.answer().map_err(|error| Failure::of(&error).hint(error.hint()))?;
+        let inputs: Vec<&Path> = self.body.iter().map(Path::new).collect();
+        let output = Output::open(&self.output, &inputs)?;
+        let assumed = Assumed {
+            fluid: self.fluid.fluid.is_none(),
+            temperature: self.fluid.temperature.is_none(),
+            ..Assumed::default()
+        };
+        output.write(&answer, |style| regime_text(&answer, &assumed, style))?;
+        let outside = answer.validity.verdict == Some(Verdict::Outside);
+        Ok(if self.strict && outside { Exit::OutsideCreepingFlow } else { Exit::Done })
+    }
+
+    fn body(&self) -> Result<Option<RegimeBody>, Failure> {
+        if let Some(size) = self.size {
+            return Ok(Some(RegimeBody::of_span(size)));
+        }
+        let Some(text) = &self.body else { return Ok(None) };
+        let body = Body::read(text, self.unit.as_ref(), None).map_err(|error| {
+            let hints = error.hints();
+            hints.into_iter().fold(Failure::of(&error), Failure::hint)
+        })?;
+        let bounds = RegimeBody::of(&body).ok_or_else(|| {
+            Failure::new(format!("the surface of {} encloses no volume", body.name))
+                .hint("the body must be a closed surface with its normals outwards")
+        })?;
+        Ok(Some(bounds))
+    }
+
+    fn given(&self, material: Option<&Material>) -> Given {
+        let mut given = Given::default();
+        let density = self.body_density.or(material.map(Material::density));
+        let stiffness = match self.stiffness {
+            Some(stiffness) if stiffness.dimension() == Dimension::PRESSURE => Input::BulkStiffness,
+            _ => Input::SurfaceStiffness,
+        };
+        for (input, quantity) in [
+            (Input::BodyDensity, density),
+            (stiffness, self.stiffness),
+            (Input::Concentration, self.concentration),
+            (Input::Gap, self.gap),
+            (Input::Roughness, self.roughness),
+            (Input::Speed, self.speed),
+            (Input::Spin, self.spin),
+            (Input::Force, self.force),
+            (Input::Acceleration, self.gravity.or(self.centrifuge)),
+            (Input::Frequency, self.frequency),
+            (Input::TemperatureDifference, self.temperature_difference),
+            (Input::ChamberWidth, self.chamber),
+        ] {
+            given.set_some(input, quantity);
+        }
+        for (input, quantity) in self.channel.iter().flat_map(|channel| &channel.sizes) {
+            given.set(*input, *quantity);
+        }
+        if let Some(flow) = &self.flow {
+            given.set(flow.given, flow.quantity);
+        }
+        given
+    }
+}
+
+fn known_material(name: &str) -> Result<&'static Material, Failure> {
+    Material::find(name).map_err(|error| Failure::of(&error).hint("or give its density, `--body-density 1.05g/mL`"))
+}
+
+type Parse = fn(&str) -> Result<Quantity, QuantityError>;
+
+/// A parser for clap of a quantity greater than zero.
+fn positive(parse: Parse) -> impl Fn(&str) -> Result<Quantity, String> + Clone + Send + Sync + 'static {
+    parse_with(move |text: &str| parse(text).and_then(|quantity| quantity.positive()))
+}
+
+fn gravity(text: &str) -> Result<Quantity, String> {
+    parse_acceleration(text).and_then(|quantity| quantity.non_negative()).map_err(|error| error.to_string())
+}
+
+fn frequency(text: &str) -> Result<Quantity, String> {
+    parse_frequency(text).and_then(|quantity| quantity.positive()).map_err(|error| match error {
+        QuantityError::WrongDimension { given, .. } if given == Dimension::ANGULAR_SPEED.name() => {
+            format!("`{text}` is an angular speed; an oscillation is counted in cycles, `10Hz`, 2 pi radians each")
+        }
+        other => other.to_string(),
+    })
+}
+
+fn temperature_difference(text: &str) -> Result<Quantity, String> {
+    parse_temperature_difference(text).and_then(|quantity| quantity.positive()).map_err(|error| error.to_string())
+}
+
+fn concentration(text: &str) -> Result<Quantity, String> {
+    let fraction = parse_fraction(text).and_then(|quantity| quantity.positive()).map_err(|error| match error {
+        QuantityError::WrongDimension { .. } => {
+            format!("`{text}` is no share of the volume such as `2%`; divide a mass per volume by the body's density")
+        }
+        other => other.to_string(),
+    })?;
+    if fraction.value_si() < 1.0 {
+        Ok(fraction)
+    } else {
+        Err(format!("`{text}` is all of the volume or more; a share such as `2%` or `0.02` is expected"))
+    }
+}
+
+/// A stiffness of a surface, N/m, or of a body, Pa.
+fn stiffness(text: &str) -> Result<Quantity, String> {
+    let surface = parse_surface_tension(text);
+    let read = match &surface {
+        Err(QuantityError::WrongDimension { .. }) => parse_pressure(text),
+        _ => surface,
+    };
+    read.and_then(|quantity| quantity.positive()).map_err(|error| match error {
+        QuantityError::WrongDimension { given, .. } => {
+            format!("`{text}` is {given}, but a stiffness such as `5uN/m` (of a surface) or `1kPa` (of a body) is expected")
+        }
+        other => other.to_string(),
+    })
+}
