@@ -44,7 +44,7 @@ impl DragArguments {
     /// # Errors
     /// Input that can't be used, a solve that failed, or an output that can't be written.
     pub fn run(&self) -> Result<Exit, Failure> {
-        let Filled { body: body_options, fluid: fluid_options, name } = filled(&self.body, &self.fluid)?;
+        let Filled { body: body_options, fluid: fluid_options, name, .. } = filled(&self.body, &self.fluid)?;
         let fluid = fluid_options.fluid()?;
         let mut body = body_options.body(self.solver.geometry())?;
         if let Some(name) = name {

@@ -4,15 +4,18 @@ use std::path::Path;
 
 use clap::Args;
 use slowmote::physical::quantity::{
-    parse_acceleration, parse_angular_speed, parse_density, parse_force, parse_fraction, parse_frequency,
-    parse_length, parse_pressure, parse_speed, parse_surface_tension, parse_temperature_difference,
+    parse_acceleration, parse_angular_speed, parse_density, parse_force, parse_fraction, parse_frequency, parse_length,
+    parse_pressure, parse_speed, parse_surface_tension, parse_temperature_difference,
 };
 use slowmote::physical::{Dimension, Material, Quantity, QuantityError};
-use slowmote::question::{Body, Given, Input, LengthUnit, RegimeBody, RegimeQuestion, Verdict};
+use slowmote::question::{Given, Input, LengthUnit, RegimeBody, RegimeQuestion, Verdict};
 use slowmote::show::{Assumed, regime_text};
+use slowmote::surface::Shape;
 
+use super::case::{Filled, filled};
 use super::options::{
-    ChannelOption, FlowOption, FluidOptions, OutputOptions, centrifuge, channel, flow, length_unit, parse_with,
+    BodyOptions, ChannelOption, FlowOption, FluidOptions, OutputOptions, centrifuge, channel, flow, length_unit,
+    parse_with,
 };
 use super::output::Output;
 use super::{Exit, Failure};
@@ -29,12 +32,13 @@ Examples:
   slowmote regime --in duct:width=100um,height=40um,length=2cm --flow duct:rate=10uL/min
   slowmote regime redcell:7.82um --material red-cell --fluid pbs --centrifuge g=1000")]
 pub struct RegimeArguments {
-    /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh); none for a channel alone
+    /// A shape such as `rod:12x2um`, or a surface file (.stl .obj .ply .off .msh), or a case file (.json); none for a
+    /// channel alone
     #[arg(value_name = "BODY", conflicts_with = "size")]
     body: Option<String>,
 
     /// Only the span of the body, such as `10um`: it is taken as a sphere of this diameter
-    #[arg(long, value_name = "LENGTH", value_parser = positive(parse_length), help_heading = BODY)]
+    #[arg(long, value_name = "LENGTH", value_parser = span, help_heading = BODY)]
     size: Option<Quantity>,
 
     /// The unit of a surface file's coordinates, such as `um`
@@ -118,6 +122,14 @@ pub struct RegimeArguments {
     strict: bool,
 }
 
+/// What is known beside the quantities.
+struct Known {
+    body: Option<RegimeBody>,
+    fluid: FluidOptions,
+    /// Of the body, as a case file has it.
+    density: Option<String>,
+}
+
 const BODY: &str = "The body";
 const MOTION: &str = "What moves it";
 const CHANNEL: &str = "The channel and the flow";
@@ -129,21 +141,30 @@ impl RegimeArguments {
     /// Input that can't be used or does not fit together, or an output that can't be written.
     pub fn run(&self) -> Result<Exit, Failure> {
         let material = self.material.as_deref().map(known_material).transpose()?;
+        let known = self.known()?;
+        let density = match (self.body_density.or(material.map(Material::density)), &known.density) {
+            (None, Some(text)) => Some(positive(parse_density)(text).map_err(|error| {
+                Failure::new("the density in the case file can't be used")
+                    .because(error)
+                    .hint("write it as in `1.05g/mL`")
+            })?),
+            (told, _) => told,
+        };
         let question = RegimeQuestion {
-            fluid: self.fluid.fluid()?,
-            body: self.body()?,
+            fluid: known.fluid.fluid()?,
+            body: known.body,
             material,
             channel: self.channel.as_ref().map(|channel| channel.section),
             flow: self.flow.as_ref().map(|flow| flow.flow),
             centrifuge: self.centrifuge.is_some(),
-            given: self.given(material),
+            given: self.given(density),
         };
         let answer = question.answer().map_err(|error| Failure::of(&error).hint(error.hint()))?;
         let inputs: Vec<&Path> = self.body.iter().map(Path::new).collect();
         let output = Output::open(&self.output, &inputs)?;
         let assumed = Assumed {
-            fluid: self.fluid.fluid.is_none(),
-            temperature: self.fluid.temperature.is_none(),
+            fluid: known.fluid.fluid.is_none(),
+            temperature: known.fluid.temperature.is_none(),
             ..Assumed::default()
         };
         output.write(&answer, |style| regime_text(&answer, &assumed, style))?;
@@ -151,25 +172,27 @@ impl RegimeArguments {
         Ok(if self.strict && outside { Exit::OutsideCreepingFlow } else { Exit::Done })
     }
 
-    fn body(&self) -> Result<Option<RegimeBody>, Failure> {
+    /// The body, if there is one, and the fluid; a case file stands in for options that were not given.
+    fn known(&self) -> Result<Known, Failure> {
+        let fluid = self.fluid.clone();
         if let Some(size) = self.size {
-            return Ok(Some(RegimeBody::of_span(size)));
+            return Ok(Known { body: Some(RegimeBody::of_span(size)), fluid, density: None });
         }
-        let Some(text) = &self.body else { return Ok(None) };
-        let body = Body::read(text, self.unit.as_ref(), None).map_err(|error| {
-            let hints = error.hints();
-            hints.into_iter().fold(Failure::of(&error), Failure::hint)
-        })?;
+        let Some(text) = &self.body else { return Ok(Known { body: None, fluid, density: None }) };
+        let (body, unit) = (text.clone(), self.unit.clone());
+        let options = BodyOptions { body, unit, turn: Vec::new(), at: None, reference: None };
+        let Filled { body: options, fluid, name, density } = filled(&options, &fluid)?;
+        let mut body = options.body(None)?;
+        body.name = name.unwrap_or(body.name);
         let bounds = RegimeBody::of(&body).ok_or_else(|| {
             Failure::new(format!("the surface of {} encloses no volume", body.name))
                 .hint("the body must be a closed surface with its normals outwards")
         })?;
-        Ok(Some(bounds))
+        Ok(Known { body: Some(bounds), fluid, density })
     }
 
-    fn given(&self, material: Option<&Material>) -> Given {
+    fn given(&self, density: Option<Quantity>) -> Given {
         let mut given = Given::default();
-        let density = self.body_density.or(material.map(Material::density));
         let stiffness = match self.stiffness {
             Some(stiffness) if stiffness.dimension() == Dimension::PRESSURE => Input::BulkStiffness,
             _ => Input::SurfaceStiffness,
@@ -209,6 +232,12 @@ type Parse = fn(&str) -> Result<Quantity, QuantityError>;
 /// A parser for clap of a quantity greater than zero.
 fn positive(parse: Parse) -> impl Fn(&str) -> Result<Quantity, String> + Clone + Send + Sync + 'static {
     parse_with(move |text: &str| parse(text).and_then(|quantity| quantity.positive()))
+}
+
+/// A size as those of shapes, so that a mistyped exponent is caught.
+fn span(text: &str) -> Result<Quantity, String> {
+    let size = positive(parse_length)(text)?;
+    Shape::sphere(size.value_si()).map(|_| size).map_err(|error| error.to_string())
 }
 
 fn gravity(text: &str) -> Result<Quantity, String> {
@@ -251,7 +280,9 @@ fn stiffness(text: &str) -> Result<Quantity, String> {
     };
     read.and_then(|quantity| quantity.positive()).map_err(|error| match error {
         QuantityError::WrongDimension { given, .. } => {
-            format!("`{text}` is {given}, but a stiffness such as `5uN/m` (of a surface) or `1kPa` (of a body) is expected")
+            format!(
+                "`{text}` is {given}, but a stiffness such as `5uN/m` (of a surface) or `1kPa` (of a body) is expected"
+            )
         }
         other => other.to_string(),
     })

@@ -11,15 +11,12 @@ const FEWEST_MOLECULES_M: f64 = 5e-9;
 /// A half length, m, beyond which a unit was mistaken more often than not. A choice of this program.
 const LARGEST_USUAL_M: f64 = 0.1;
 
-const BLOOD: &str = "Blood differs from donor to donor. Nothing here replaces tests on the device or the sample: for medical use \
-                     follow the local rules and the judgement of licensed practitioners.";
+const BLOOD: &str = "Blood differs from donor to donor. Nothing here replaces tests on the device or the sample: for \
+                     medical use follow the local rules and the judgement of licensed practitioners.";
 
 const BIOLOGICAL: &str = "Handle cells and blood products by your laboratory's rules of biological safety.";
 
 const SOFT: &str = "Cells are soft and differ from each other: a rigid body of one size stands for them here.";
-
-const NO_MEDICAL_ADVICE: &str = "Nothing here replaces tests on the device or the sample: for medical use follow the local rules and the \
-                                 judgement of licensed practitioners.";
 
 /// The cautions for a body of this name and half length (m) in this fluid, the fluid's own first.
 pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
@@ -42,10 +39,10 @@ pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) 
                 .to_owned(),
         );
     }
-    if red_cell || is_blood(fluid) {
+    if red_cell || is(fluid, "plasma") {
         cautions.push(BLOOD.to_owned());
     }
-    if red_cell || is(fluid, "culture-medium") || is_blood(fluid) {
+    if red_cell || is(fluid, "culture-medium") || is(fluid, "plasma") {
         cautions.push(BIOLOGICAL.to_owned());
     }
     cautions
@@ -56,14 +53,10 @@ pub(super) fn fluid_cautions(fluid: &Fluid) -> Vec<String> {
     body_cautions("", FEWEST_MOLECULES_M, fluid)
 }
 
-/// The cautions for a body that lives, whatever it is called.
-pub(super) fn living_cautions() -> Vec<String> {
-    vec![SOFT.to_owned(), BIOLOGICAL.to_owned(), NO_MEDICAL_ADVICE.to_owned()]
-}
-
-/// Whether it is blood or a part of it.
-pub(super) fn is_blood(fluid: &Fluid) -> bool {
-    is(fluid, "plasma")
+/// The cautions for a body that lives, whatever it is called; `medical` if it is one of blood or tissue.
+pub(super) fn living_cautions(medical: bool) -> Vec<String> {
+    let medical = medical.then_some(BLOOD);
+    [SOFT, BIOLOGICAL].into_iter().chain(medical).map(str::to_owned).collect()
 }
 
 fn is(fluid: &Fluid, name: &str) -> bool {

@@ -32,7 +32,8 @@ pub fn regime_text(answer: &RegimeAnswer, assumed: &Assumed, style: Style) -> St
         channel_lines(&mut sheet, channel);
     }
     for motion in &answer.motions {
-        motion_line(&mut sheet, motion);
+        let number = answer.validity.numbers.iter().find(|number| number.name == motion.reynolds_name);
+        motion_line(&mut sheet, motion, number.map(|number| number.verdict));
     }
     let mut numbers: Vec<&RegimeNumber> = answer.validity.numbers.iter().collect();
     if !numbers.is_empty() {
@@ -53,9 +54,11 @@ pub fn regime_text(answer: &RegimeAnswer, assumed: &Assumed, style: Style) -> St
     for caution in &answer.cautions {
         sheet.item("beware", &sentence(caution));
     }
-    for (index, left) in answer.questions_left.iter().enumerate() {
-        let label = if index == 0 { "not told" } else { "" };
-        sheet.item(label, &format!("{}: {}", left.what.replace(' ', GLUE), left.would_tell));
+    let left =
+        answer.questions_left.iter().map(|left| format!("{} ({})", left.what.replace(' ', GLUE), left.would_tell));
+    let left = left.collect::<Vec<_>>().join("; ");
+    if !left.is_empty() {
+        sheet.item("not told", &left);
     }
     sheet.finish()
 }
@@ -88,9 +91,8 @@ fn verdict(sheet: &mut Sheet, answer: &RegimeAnswer) {
     };
     match (validity.verdict, find(&validity.decided_by)) {
         (Some(verdict), Some(number)) => {
-            let is_best = verdict == Verdict::Creeping;
-            let lead = if is_best { ", by every number: the first is the " } else { ": the " };
-            sheet.toned_item("verdict", tone(verdict), verdict.word(), &format!("{lead}{}", what(number)));
+            let lead = if verdict == Verdict::Creeping { "nearest to its limit is the" } else { "the" };
+            sheet.toned_item("verdict", tone(verdict), verdict.word(), &format!(": {lead} {}", what(number)));
         }
         _ => sheet.item("verdict", "none: nothing that moves was told (see below)"),
     }
@@ -100,13 +102,13 @@ fn verdict(sheet: &mut Sheet, answer: &RegimeAnswer) {
         }
     }
     let force = si(validity.force_limit_n, DisplayUnit::FORCE, NUMBER_DIGITS);
-    let at = format!("(particle Reynolds number {SPEED_LIMIT_REYNOLDS})");
+    let at = format!("a particle Reynolds number of {SPEED_LIMIT_REYNOLDS}");
     match validity.speed_limit_m_per_s {
-        Some(speed) => sheet.item(
-            "limits",
-            &format!("creeping up to {} {at}; for any shape, up to a force of {force}", si(speed, DisplayUnit::SPEED, 2)),
-        ),
-        None => sheet.item("limits", &format!("a body of any shape creeps up to a force of {force} {at}")),
+        Some(speed) => {
+            let speed = si(speed, DisplayUnit::SPEED, 2);
+            sheet.item("limits", &format!("it creeps up to {speed}, or to a force of {force} ({at})"));
+        }
+        None => sheet.item("limits", &format!("a body of any shape creeps up to a force of {force} ({at})")),
     }
 }
 
@@ -117,12 +119,19 @@ fn limit(number: &RegimeNumber) -> String {
     } else {
         threshold
     };
-    // Only of Peclet numbers large ones are wanted.
-    let from = number.name.ends_with("Peclet number");
-    match (number.concerns, from) {
+    match (number.concerns, number.wants_large()) {
         (Concern::Path, true) => format!("no matter above {threshold}"),
         (Concern::Path, false) => format!("no matter below {threshold}"),
         _ => format!("creeping below {threshold}"),
+    }
+}
+
+/// What follows the speed by a law that does not hold at this verdict.
+fn reservation(verdict: Option<Verdict>) -> &'static str {
+    match verdict {
+        Some(Verdict::Outside) => ", which is far too fast here",
+        Some(Verdict::Doubtful) => ", which is too fast here",
+        _ => "",
     }
 }
 
@@ -146,7 +155,14 @@ fn number_line(sheet: &mut Sheet, number: &RegimeNumber) {
 
 fn body_lines(sheet: &mut Sheet, body: &RegimeBodyAnswer) {
     let length = DisplayUnit::LENGTH.choose(body.size_m.into_iter().fold(0.0, f64::max), DIGITS);
-    let edges = body.size_m.map(|edge| length.number(edge, DIGITS)).join(" x ");
+    let (least, most) = (body.hydrodynamic_radius_at_least_m, body.hydrodynamic_radius_at_most_m);
+    let sphere = least == most;
+    let edges = match sphere {
+        true => format!("{}{GLUE}{} across", length.number(body.size_m[0], DIGITS), length.symbol()),
+        false => {
+            format!("{}{GLUE}{}", body.size_m.map(|edge| length.number(edge, DIGITS)).join(" x "), length.symbol())
+        }
+    };
     let error = if body.size_relative_uncertainty > 0.0 {
         format!(" {}", plus_minus(Some(body.size_relative_uncertainty)))
     } else {
@@ -155,11 +171,8 @@ fn body_lines(sheet: &mut Sheet, body: &RegimeBodyAnswer) {
     let density =
         body.density_kg_m3.map_or_else(String::new, |density| format!(", {}", si(density, DisplayUnit::DENSITY, 4)));
     let volume = si(body.volume_m3, DisplayUnit::VOLUME, DIGITS);
-    sheet.item("size", &format!("{edges}{GLUE}{}{error}, volume {volume}{density}", length.symbol()));
-    let (least, most) = (body.hydrodynamic_radius_at_least_m, body.hydrodynamic_radius_at_most_m);
-    if least == most {
-        sheet.item("feels like", &format!("a sphere of radius {}", si(least, DisplayUnit::LENGTH, DIGITS)));
-    } else {
+    sheet.item("size", &format!("{edges}{error}, volume {volume}{density}"));
+    if !sphere {
         let unit = DisplayUnit::LENGTH.choose(least, DIGITS);
         sheet.item(
             "feels like",
@@ -212,7 +225,8 @@ fn channel_lines(sheet: &mut Sheet, channel: &ChannelAnswer) {
     ) else {
         return;
     };
-    let digits = |error: Option<f64>| if error == Some(0.0) { FLUID_DIGITS } else { digits_for(error).min(FLUID_DIGITS) };
+    let digits =
+        |error: Option<f64>| if error == Some(0.0) { FLUID_DIGITS } else { digits_for(error).min(FLUID_DIGITS) };
     let bound = |error: Option<f64>| match error {
         Some(error) if error > 0.0 => format!(" {}", plus_minus(Some(error))),
         _ => String::new(),
@@ -252,7 +266,7 @@ fn channel_lines(sheet: &mut Sheet, channel: &ChannelAnswer) {
     sheet.item("entry", &format!("developed after {}", length(entry)));
 }
 
-fn motion_line(sheet: &mut Sheet, motion: &RegimeMotion) {
+fn motion_line(sheet: &mut Sheet, motion: &RegimeMotion, verdict: Option<Verdict>) {
     let speed = |value: f64| si(value, DisplayUnit::SPEED, DIGITS);
     let error = match motion.speed_relative_uncertainty {
         Some(relative) if relative > 0.0 => format!(" ± {}", percent(relative)),
@@ -261,13 +275,14 @@ fn motion_line(sheet: &mut Sheet, motion: &RegimeMotion) {
     let range = match (motion.speed_at_least_m_per_s, motion.speed_at_most_m_per_s) {
         (Some(least), Some(most)) if least == most => format!("{}{error}", speed(most)),
         (Some(least), Some(most)) => format!("{} to {}{error}", speed(least), speed(most)),
-        _ => "an unknown speed, as the size is not told".to_owned(),
+        _ => String::new(),
     };
     let force = motion.force_n.map(|force| si(force.abs(), DisplayUnit::FORCE, DIGITS)).unwrap_or_default();
-    let law = "by Stokes's law in open fluid";
+    let law = format!("by Stokes's law in open fluid{}", reservation(verdict));
     match motion.cause.as_str() {
         "speed" => sheet.item("moves", &format!("at {range} through the fluid, as given")),
         "flow" => sheet.item("held", &format!("in a uniform flow of {range}")),
+        "force" if range.is_empty() => sheet.item("pulled", &format!("by {force}; its speed needs its size")),
         "force" => sheet.item("pulled", &format!("by {force}: at {range}, {law}")),
         _ if motion.force_n == Some(0.0) => sheet.item("floats", "as it is just as dense as the fluid"),
         _ => {

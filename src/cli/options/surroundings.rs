@@ -114,7 +114,9 @@ pub fn centrifuge(text: &str) -> Result<Quantity, String> {
 }
 
 fn section(name: &str) -> Option<Section> {
-    [Section::Tube, Section::Slot, Section::Duct].into_iter().find(|section| section.word().eq_ignore_ascii_case(name.trim()))
+    [Section::Tube, Section::Slot, Section::Duct]
+        .into_iter()
+        .find(|section| section.word().eq_ignore_ascii_case(name.trim()))
 }
 
 /// Texts of the form `key=value`, joined by commas.

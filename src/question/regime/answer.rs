@@ -111,6 +111,8 @@ pub struct ChannelAnswer {
 pub struct RegimeMotion {
     /// What moves it: `speed`, `flow`, `force` or `weight`.
     pub cause: String,
+    /// Name of its Reynolds number in the list of numbers.
+    pub reynolds_name: String,
     /// The driving force, N, for a weight less buoyancy, negative if the body rises; null if the speed is given.
     pub force_n: Option<f64>,
     /// Speed at least, m/s; null for a force on a body of unknown size.
@@ -182,6 +184,18 @@ pub struct RegimeNumber {
     pub may_be: Option<Verdict>,
     /// What it means, in a sentence.
     pub meaning: String,
+}
+
+impl RegimeNumber {
+    /// Whether large values are the good ones, as those of Peclet numbers.
+    pub fn wants_large(&self) -> bool {
+        (self.value < self.threshold) == (self.verdict > Verdict::Creeping)
+    }
+
+    /// How much of the way to its limit the number has gone; beyond one it has passed it.
+    pub(super) fn share_of_limit(&self) -> f64 {
+        if self.wants_large() { self.threshold / self.value } else { self.value / self.threshold }
+    }
 }
 
 /// Something that was not told.

@@ -5,11 +5,11 @@ use super::evaluation::Evaluation;
 use super::given::{Given, Input};
 use crate::physical::quantity::{DisplayUnit, format_si};
 use crate::physical::{Fluid, Material};
-use crate::question::cautions::{body_cautions, fluid_cautions, is_blood, living_cautions};
+use crate::question::cautions::{body_cautions, fluid_cautions, living_cautions};
 
-/// Materials that live: soft, and different from day to day.
-const LIVING: [&str; 7] =
-    ["red-cell", "white-cell", "platelet", "mammalian-cell", "yeast", "bacterium", "bacterial-spore"];
+/// Materials that live: soft, and different from day to day; the first of them from blood.
+const LIVING: [&str; 6] = ["red-cell", "white-cell", "platelet", "mammalian-cell", "yeast", "bacterium"];
+const OF_BLOOD: usize = 3;
 
 /// The cautions for this fluid, body, material and centrifuge.
 pub(super) fn cautions(
@@ -28,9 +28,13 @@ pub(super) fn cautions(
         None => fluid_cautions(fluid),
     };
     cautions.extend(one_viscosity(fluid, body, given, state));
-    let cells = material.is_some_and(|material| LIVING.contains(&material.name()));
-    if cells {
-        cautions.extend(living_cautions().into_iter().filter(|caution| !cautions.contains(caution)).collect::<Vec<_>>());
+    let living = material.and_then(|material| LIVING.iter().position(|name| *name == material.name()));
+    if let Some(place) = living {
+        for caution in living_cautions(place < OF_BLOOD) {
+            if !cautions.contains(&caution) {
+                cautions.push(caution);
+            }
+        }
     }
     if let Some(material) = material.filter(|material| !material.note().is_empty()) {
         cautions.push(format!("The density is a usual one for {}: {}.", material.name(), material.note()));
@@ -45,9 +49,9 @@ pub(super) fn cautions(
     cautions
 }
 
-/// One viscosity does not describe every fluid: said wherever one was given by number, and for blood.
+/// One viscosity does not describe every fluid: said wherever one was given by number. Plasma brings a caution of its own.
 fn one_viscosity(fluid: &Fluid, body: Option<&RegimeBody>, given: &Given, state: &Evaluation) -> Option<String> {
-    if !(fluid.is_given_by_numbers() || is_blood(fluid)) {
+    if !fluid.is_given_by_numbers() {
         return None;
     }
     let moving = body.and_then(|body| {

@@ -57,6 +57,11 @@ impl Evaluation {
         evaluation
     }
 
+    /// Whether every result is a number.
+    pub(super) fn is_finite(&self) -> bool {
+        self.results().iter().all(|(_, value)| value.is_finite())
+    }
+
     /// Every result by a name of its own.
     fn results(&self) -> Vec<(&'static str, f64)> {
         let mut results: Vec<(&'static str, f64)> =

@@ -1,21 +1,15 @@
 //! The question of `regime`: what is known, whether it fits together, and the answer.
 
-use thiserror::Error;
-
-use super::answer::{
-    ChannelAnswer, Concern, REGIME_SCHEMA, RegimeAnswer, RegimeBodyAnswer, RegimeMotion, RegimeNumber, RegimeValidity,
-    Untold,
-};
-use super::body_numbers::ROUND;
+use super::answer::{Concern, REGIME_SCHEMA, RegimeAnswer, RegimeNumber, RegimeValidity, Untold};
 use super::bounds::RegimeBody;
 use super::cautions::cautions;
 use super::channel::{Channel, Section};
-use super::evaluation::{
-    Evaluation, MEAN_SPEED, PRESSURE, PRESSURE_DROP, Setting, Uncertainties, WALL_SHEAR,
-};
+use super::check::RegimeError;
+use super::evaluation::{Evaluation, Setting, Uncertainties};
+use super::figures::{body_answer, channel_answer, motion_answers};
 use super::given::{Flow, Given, Input};
-use super::motion::{Cause, weight};
-use super::number::Number;
+use super::number::{Number, percent};
+use super::path_numbers::ROUND;
 use crate::physical::constants::STANDARD_GRAVITY_M_PER_S2;
 use crate::physical::quantity::{DisplayUnit, format_si};
 use crate::physical::{Dimension, Fluid, Material, Quantity};
@@ -41,79 +35,8 @@ pub struct RegimeQuestion {
     pub given: Given,
 }
 
-/// Why the question makes no sense.
-#[derive(Debug, Clone, PartialEq, Eq, Error)]
-#[non_exhaustive]
-pub enum RegimeError {
-    /// Nothing to tell a number from.
-    #[error("there is neither a body nor a channel nor a force")]
-    Nothing,
-    /// A quantity that only makes sense together with another.
-    #[error("{what} needs {partner}")]
-    Alone {
-        /// What was given.
-        what: &'static str,
-        /// What is missing.
-        partner: &'static str,
-        /// How to give it.
-        hint: &'static str,
-    },
-    /// A flow through another channel than the one given.
-    #[error("the flow is one through a {flow}, and the channel is a {channel}")]
-    OtherChannel {
-        /// The flow.
-        flow: &'static str,
-        /// The channel.
-        channel: &'static str,
-    },
-    /// A flow that does not obey the walls.
-    #[error("a {flow} flow does not obey the walls of a {channel}")]
-    ThroughWalls {
-        /// The flow.
-        flow: &'static str,
-        /// The channel.
-        channel: &'static str,
-    },
-    /// A slot has no ends, and so no flow rate.
-    #[error("a slot has no width, so a flow rate says nothing of its speed")]
-    RateInSlot,
-    /// The body is larger than the channel.
-    #[error("the body, {body}, does not fit into the {channel}, {space}")]
-    DoesNotFit {
-        /// Its size in words.
-        body: String,
-        /// The channel.
-        channel: &'static str,
-        /// Its size in words.
-        space: String,
-    },
-}
-
-impl RegimeError {
-    /// What the user can do next.
-    pub fn hint(&self) -> String {
-        match self {
-            Self::Nothing => "give a body such as `rod:12x2um`, a size such as `--size 10um`, a channel such as `--in \
-                              tube:diameter=50um`, or a force such as `--force 2pN`"
-                .to_owned(),
-            Self::Alone { hint, .. } => (*hint).to_owned(),
-            Self::OtherChannel { channel, .. } => format!("write `--flow {channel}:mean=1mm/s`"),
-            Self::ThroughWalls { channel, .. } => {
-                format!("write `--flow {channel}:mean=1mm/s`, or leave `--in` out for a flow without walls")
-            }
-            Self::RateInSlot => {
-                "give its mean speed, `--flow slot:mean=1mm/s`, or make it a duct, `--in duct:width=1mm,height=20um`"
-                    .to_owned()
-            }
-            Self::DoesNotFit { .. } => {
-                "check the units of both; sizes are full dimensions, diameters and no radii".to_owned()
-            }
-        }
-    }
-}
-
-/// Speed or force, body, and what is missed without them.
-const A_BODY: &str = "give the body, such as `rod:12x2um`, or its size, `--size 10um`";
+/// Shares of limits closer than this are the same, but for rounding.
+const ROUNDING: f64 = 1e-9;
 
 impl RegimeQuestion {
     /// The answer.
@@ -132,6 +55,9 @@ impl RegimeQuestion {
         };
         let state = Evaluation::of(&setting, &given);
         self.check_fit(state.channel.as_ref())?;
+        if !state.is_finite() {
+            return Err(RegimeError::Beyond);
+        }
         let uncertainties = Uncertainties::of(&setting, &given, &state);
         let body = self.body.as_ref();
         Ok(RegimeAnswer {
@@ -149,96 +75,12 @@ impl RegimeQuestion {
         })
     }
 
-    fn check(&self) -> Result<(), RegimeError> {
-        let has = |input| self.given.has(input);
-        let alone = |what, partner, hint| Err(RegimeError::Alone { what, partner, hint });
-        let body = self.body.is_some();
-        match (self.flow, self.channel) {
-            (Some(Flow::Through(flow)), Some(channel)) if flow != channel => {
-                return Err(RegimeError::OtherChannel { flow: flow.word(), channel: channel.word() });
-            }
-            (Some(Flow::Shear), Some(channel)) => {
-                return Err(RegimeError::ThroughWalls { flow: "shear", channel: channel.word() });
-            }
-            (Some(Flow::Uniform), Some(channel)) => {
-                return Err(RegimeError::ThroughWalls { flow: "uniform", channel: channel.word() });
-            }
-            (Some(Flow::Through(Section::Tube)), None) => {
-                return alone("the flow through a tube", "the tube", "give it, `--in tube:diameter=50um`");
-            }
-            (Some(Flow::Through(Section::Slot)), None) => {
-                return alone("the flow through a slot", "the slot", "give it, `--in slot:height=20um`");
-            }
-            (Some(Flow::Through(Section::Duct)), None) => {
-                return alone("the flow through a duct", "the duct", "give it, `--in duct:width=100um,height=40um`");
-            }
-            _ => {}
-        }
-        if self.channel == Some(Section::Slot) && has(Input::FlowRate) {
-            return Err(RegimeError::RateInSlot);
-        }
-        let needs_body = [
-            (Input::Speed, "a speed"),
-            (Input::UniformSpeed, "a uniform flow"),
-            (Input::ShearRate, "a shear flow"),
-            (Input::Spin, "a spin"),
-            (Input::BodyDensity, "the body's density"),
-            (Input::SurfaceStiffness, "a stiffness"),
-            (Input::BulkStiffness, "a stiffness"),
-        ];
-        for (input, what) in needs_body {
-            if has(input) && !body {
-                return alone(what, "a body", A_BODY);
-            }
-        }
-        if !body && self.channel.is_none() && !has(Input::Force) {
-            return Err(RegimeError::Nothing);
-        }
-        if has(Input::Frequency) && !body && self.channel.is_none() {
-            return alone("a frequency", "a body or a channel", A_BODY);
-        }
-        if self.centrifuge && !has(Input::BodyDensity) {
-            let hint = "give `--body-density 1.05g/mL`, or `--material polystyrene`";
-            return alone("a centrifuge", "the density of the body", hint);
-        }
-        let width = has(Input::ChamberWidth) || self.channel.is_some();
-        if has(Input::TemperatureDifference) && !width {
-            let hint = "give the distance between the warm and the cold side, `--chamber 1mm`";
-            return alone("a difference of temperature", "the width of the chamber", hint);
-        }
-        if has(Input::ChamberWidth) && !has(Input::TemperatureDifference) {
-            let hint = "give it, `--temperature-difference 0.1K`";
-            return alone("the width of the chamber", "the difference of temperature across it", hint);
-        }
-        match (has(Input::Gap), has(Input::Roughness)) {
-            (true, false) => alone("a gap", "the roughness", "give it, `--roughness 10nm`"),
-            (false, true) => alone("a roughness", "the gap", "give it, `--gap 200nm`"),
-            _ => Ok(()),
-        }
-    }
-
-    fn check_fit(&self, channel: Option<&Channel>) -> Result<(), RegimeError> {
-        let (Some(body), Some(channel)) = (&self.body, channel) else { return Ok(()) };
-        if channel.admits(body.size_m) {
-            return Ok(());
-        }
-        let length = |metres: f64| format_si(metres, DisplayUnit::LENGTH, 3);
-        let space = match channel.section {
-            Section::Tube => format!("{} across", length(channel.narrow)),
-            Section::Slot => format!("{} high", length(channel.narrow)),
-            Section::Duct => format!("{} by {}", length(channel.wide), length(channel.narrow)),
-        };
-        let body = body.size_m.map(length).join(" x ");
-        Err(RegimeError::DoesNotFit { body, channel: channel.section.word(), space })
-    }
-
     /// What was given, with what the fluid, the body and the earth add to it.
     fn completed(&self) -> Given {
         let mut given = self.given.clone();
         let relative = |value: f64, relative: f64, dimension| Quantity::trusted(value, relative * value, dimension);
         let fluid = &self.fluid;
-        let viscosity =
-            relative(fluid.viscosity_pa_s(), fluid.viscosity_relative_uncertainty(), Dimension::VISCOSITY);
+        let viscosity = relative(fluid.viscosity_pa_s(), fluid.viscosity_relative_uncertainty(), Dimension::VISCOSITY);
         let density = relative(fluid.density_kg_m3(), fluid.density_relative_uncertainty(), Dimension::DENSITY);
         given.set(Input::Viscosity, viscosity);
         given.set(Input::FluidDensity, density);
@@ -255,9 +97,8 @@ impl RegimeQuestion {
             state.numbers.iter().map(|number| number_answer(number, uncertainties)).collect();
         let on_path = |number: &&RegimeNumber| number.concerns == Concern::Path;
         let on_flow = |number: &&RegimeNumber| number.concerns != Concern::Path;
-        // The first of equally bad ones decides.
-        let decisive = numbers.iter().filter(on_flow).rev().max_by_key(|number| number.verdict);
-        let path = numbers.iter().filter(on_path).rev().max_by_key(|number| number.verdict);
+        let decisive = worst(numbers.iter().filter(on_flow));
+        let path = worst(numbers.iter().filter(on_path));
         let (viscosity, density) = (self.fluid.viscosity_pa_s(), self.fluid.density_kg_m3());
         let speed_limit =
             |body: &RegimeBody| SPEED_LIMIT_REYNOLDS * viscosity / (2.0 * density * body.radius_at_most_m);
@@ -291,7 +132,7 @@ impl RegimeQuestion {
             notes.push(format!(
                 "The walls add {near} {} to the drag in the middle of the channel (first order, Brenner 1962), which \
                  the speeds here don't have.",
-                super::number::percent(share)
+                percent(share)
             ));
         }
         notes
@@ -310,20 +151,35 @@ impl RegimeQuestion {
         let channel = self.channel.is_some();
         let moved = [Input::Speed, Input::Force, Input::UniformSpeed, Input::BodyDensity].into_iter().any(has);
         ask(body && !moved, "--speed or --force", "particle Reynolds and Peclet numbers");
-        ask(body && !has(Input::BodyDensity), "--body-density or --material", "settling, Archimedes and Stokes numbers");
+        ask(
+            body && !has(Input::BodyDensity),
+            "--body-density or --material",
+            "settling, Archimedes and Stokes numbers",
+        );
         ask(!body, "a body, or --size", "every number on the body");
         ask(channel && self.flow.is_none(), "--flow", "speeds, pressure drop and shear rates in the channel");
         ask(channel && !has(Input::Length), "length= in --in", "pressure drop, entry and focusing lengths");
         ask(channel && !has(Input::BendRadius), "bend-radius= in --in", "Dean number, if it bends");
-        ask(!has(Input::Frequency), "--frequency", "unsteady and Womersley numbers, if anything oscillates");
-        ask(body && !has(Input::Concentration), "--concentration", "crowding, if there are many bodies");
+        ask(!has(Input::Frequency), "--frequency", "if anything oscillates");
+        ask(body && !has(Input::Concentration), "--concentration", "if there are many bodies");
         let stiffness = has(Input::SurfaceStiffness) || has(Input::BulkStiffness);
-        ask(body && !stiffness, "--stiffness", "capillary number, if the body is soft");
+        ask(body && !stiffness, "--stiffness", "if the body is soft");
         let heated = self.fluid.thermal_expansion_per_k().is_some() && !has(Input::TemperatureDifference);
         ask(body && heated, "--temperature-difference", "thermal convection");
-        ask(body && !has(Input::Gap), "--gap and --roughness", "where lubrication ends, near a wall");
+        ask(body && !has(Input::Gap), "--gap and --roughness", "near a wall");
         left
     }
+}
+
+/// The worst of some numbers: of equal verdicts the one that is most beyond its limit, or nearest to it, and of these the
+/// first.
+fn worst<'a>(mut numbers: impl Iterator<Item = &'a RegimeNumber>) -> Option<&'a RegimeNumber> {
+    let first = numbers.next()?;
+    Some(numbers.fold(first, |worst, other| {
+        let further = other.share_of_limit() > worst.share_of_limit() * (1.0 + ROUNDING);
+        let worse = other.verdict > worst.verdict || (other.verdict == worst.verdict && further);
+        if worse { other } else { worst }
+    }))
 }
 
 fn number_answer(number: &Number, uncertainties: &Uncertainties) -> RegimeNumber {
@@ -379,75 +235,4 @@ fn wall_share(body: &RegimeBody, channel: &Channel) -> Option<(f64, &'static str
         return Some((0.5, "more than"));
     }
     (share > 0.01).then_some((share, near))
-}
-
-fn body_answer(body: &RegimeBody, given: &Given) -> RegimeBodyAnswer {
-    RegimeBodyAnswer {
-        name: body.name.clone(),
-        size_m: body.size_m,
-        volume_m3: body.volume_m3,
-        size_relative_uncertainty: body.scale.relative_uncertainty(),
-        enclosing_radius_m: body.enclosing_radius_m,
-        hydrodynamic_radius_at_least_m: body.radius_at_least_m,
-        hydrodynamic_radius_at_most_m: body.radius_at_most_m,
-        density_kg_m3: given.get(Input::BodyDensity),
-        notes: body.notes.clone(),
-    }
-}
-
-fn channel_answer(
-    channel: &Channel,
-    state: &Evaluation,
-    given: &Given,
-    uncertainties: &Uncertainties,
-) -> ChannelAnswer {
-    let (width, height) = match channel.section {
-        Section::Tube => (Some(channel.narrow), channel.narrow),
-        Section::Slot => (None, channel.narrow),
-        Section::Duct => (given.get(Input::Width), given.get(Input::Height).unwrap_or(channel.narrow)),
-    };
-    let flow = state.flow;
-    let relative = |name| flow.and_then(|_| uncertainties.relative(name));
-    let pressure = if channel.length.is_some() { PRESSURE_DROP } else { PRESSURE };
-    let viscosity = given.get(Input::Viscosity).unwrap_or(f64::NAN);
-    ChannelAnswer {
-        section: channel.section.word().to_owned(),
-        width_m: width,
-        height_m: height,
-        length_m: channel.length,
-        bend_radius_m: channel.bend_radius,
-        hydraulic_diameter_m: channel.hydraulic_diameter(),
-        mean_speed_m_per_s: flow.map(|flow| flow.mean_speed),
-        speed_relative_uncertainty: relative(MEAN_SPEED),
-        largest_speed_m_per_s: flow.map(|flow| flow.largest_speed),
-        flow_rate_m3_per_s: flow.and_then(|flow| flow.flow_rate),
-        reynolds: flow.map(|flow| flow.reynolds),
-        pressure_gradient_pa_per_m: flow.map(|flow| flow.pressure_gradient),
-        pressure_drop_pa: flow.zip(channel.length).map(|(flow, length)| flow.pressure_gradient * length),
-        pressure_relative_uncertainty: relative(pressure),
-        wall_shear_rate_per_s: flow.map(|flow| flow.largest_wall_shear),
-        mean_wall_shear_rate_per_s: flow.map(|flow| flow.mean_wall_shear),
-        wall_shear_stress_pa: flow.map(|flow| viscosity * flow.largest_wall_shear),
-        shear_relative_uncertainty: relative(WALL_SHEAR),
-        entry_length_m: flow.map(|flow| flow.entry_length),
-    }
-}
-
-fn motion_answers(
-    state: &Evaluation,
-    given: &Given,
-    body: Option<&RegimeBody>,
-    uncertainties: &Uncertainties,
-) -> Vec<RegimeMotion> {
-    let answer = |motion: &super::motion::Motion| RegimeMotion {
-        cause: motion.cause.word().to_owned(),
-        force_n: match motion.cause {
-            Cause::Weight => body.and_then(|body| weight(given, body)),
-            _ => motion.force,
-        },
-        speed_at_least_m_per_s: motion.speed.map(|[slowest, _]| slowest),
-        speed_at_most_m_per_s: motion.speed.map(|[_, fastest]| fastest),
-        speed_relative_uncertainty: motion.speed.and_then(|_| uncertainties.relative(motion.cause.word())),
-    };
-    state.motions.iter().map(answer).collect()
 }
