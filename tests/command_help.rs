@@ -23,3 +23,8 @@ fn help_of_fluid() {
 fn version() {
     assert_eq!(slowmote("--version").ends_with(0).stdout, concat!("slowmote ", env!("CARGO_PKG_VERSION"), "\n"));
 }
+
+#[test]
+fn help_of_regime() {
+    insta::assert_snapshot!("help_regime", slowmote("regime --help").ends_with(0).stdout);
+}
