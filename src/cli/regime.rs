@@ -23,8 +23,8 @@ use super::{Exit, Failure};
 /// Options of `regime`.
 #[derive(Debug, Args)]
 #[command(after_help = "\
-Nothing is solved: a body of any shape is held between the sphere of its volume and what encloses it, and
-the worse end decides. Quantities may carry their uncertainty, as in 10±0.3um.
+Nothing is solved: a body of any shape is held between the sphere of its volume and what encloses
+it, and the worse end decides. Quantities may carry their uncertainty, as in 10±0.3um.
 
 Examples:
   slowmote regime --size 10um --body-density 1.05g/mL

@@ -16,7 +16,9 @@ const BLOOD: &str = "Blood differs from donor to donor. Nothing here replaces te
 
 const BIOLOGICAL: &str = "Handle cells and blood products by your laboratory's rules of biological safety.";
 
-const SOFT: &str = "Cells are soft and differ from each other: a rigid body of one size stands for them here.";
+/// What is said of cells in general.
+pub(super) const SOFT: &str =
+    "Cells are soft and differ from each other: a rigid body of one size stands for them here.";
 
 /// The cautions for a body of this name and half length (m) in this fluid, the fluid's own first.
 pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {

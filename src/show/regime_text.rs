@@ -96,10 +96,9 @@ fn verdict(sheet: &mut Sheet, answer: &RegimeAnswer) {
         }
         _ => sheet.item("verdict", "none: nothing that moves was told (see below)"),
     }
-    if let (Some(verdict), Some(number)) = (validity.path_verdict, find(&validity.path_decided_by)) {
-        if verdict > Verdict::Creeping {
-            sheet.item("path", &format!("the {}", what(number)));
-        }
+    let path = find(&validity.path_decided_by).filter(|number| number.verdict > Verdict::Creeping);
+    if let Some(number) = path {
+        sheet.item("path", &format!("the {}", what(number)));
     }
     let force = si(validity.force_limit_n, DisplayUnit::FORCE, NUMBER_DIGITS);
     let at = format!("a particle Reynolds number of {SPEED_LIMIT_REYNOLDS}");

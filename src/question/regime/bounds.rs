@@ -161,7 +161,10 @@ mod tests {
     fn the_bounds_of_a_sphere_meet() {
         let sphere = body("sphere:10±1um");
         assert!(sphere.is_sphere() && sphere.radius_at_most_m == sphere.radius_at_least_m);
-        assert!((sphere.radius_at_least_m - 5e-6).abs() < 1e-18 && sphere.scale.relative_uncertainty() == 0.1);
+        assert!(
+            (sphere.radius_at_least_m / 5e-6 - 1.0).abs() < 1e-12
+                && (sphere.scale.relative_uncertainty() - 0.1).abs() < 1e-12
+        );
         assert!(!body("rod:12x2um").is_sphere());
     }
 }

@@ -5,7 +5,7 @@ use super::evaluation::Evaluation;
 use super::given::{Given, Input};
 use crate::physical::quantity::{DisplayUnit, format_si};
 use crate::physical::{Fluid, Material};
-use crate::question::cautions::{body_cautions, fluid_cautions, living_cautions};
+use crate::question::cautions::{SOFT, body_cautions, fluid_cautions, living_cautions};
 
 /// Materials that live: soft, and different from day to day; the first of them from blood.
 const LIVING: [&str; 6] = ["red-cell", "white-cell", "platelet", "mammalian-cell", "yeast", "bacterium"];
@@ -31,7 +31,8 @@ pub(super) fn cautions(
     let living = material.and_then(|material| LIVING.iter().position(|name| *name == material.name()));
     if let Some(place) = living {
         for caution in living_cautions(place < OF_BLOOD) {
-            if !cautions.contains(&caution) {
+            let said = caution == SOFT && cautions.iter().any(|known| known.contains("is soft"));
+            if !said && !cautions.contains(&caution) {
                 cautions.push(caution);
             }
         }

@@ -59,8 +59,8 @@ pub(super) fn channel_numbers(given: &Given, body: Option<&RegimeBody>, state: &
 fn reynolds(flow: &ChannelFlow) -> Number {
     let value = flow.reynolds;
     let sentence = match CHANNEL_REYNOLDS.verdict(value) {
-        Verdict::Creeping if value < STRICT_CHANNEL_REYNOLDS => "creeping at posts and bends too",
-        Verdict::Creeping => "creeping; at posts and bends usable, strictly creeping below 0.1",
+        Verdict::Creeping if value < STRICT_CHANNEL_REYNOLDS => "the flow creeps, at posts and bends too",
+        Verdict::Creeping => "the flow creeps; at posts and bends nearly, strictly below 0.1",
         Verdict::Corrected => "laminar: exact in straight stretches; at ends, posts and bends inertia counts",
         Verdict::Doubtful => "the flow may turn turbulent; pressure and shear rates hold while it is laminar",
         Verdict::Outside => "the flow is turbulent; the laminar pressure and shear rates are too low",
