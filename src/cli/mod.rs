@@ -14,6 +14,7 @@ mod machine;
 mod options;
 mod output;
 mod progress;
+mod shell_word;
 mod surface;
 
 pub use arguments::Arguments;

@@ -13,6 +13,8 @@ mod drag;
 mod fluid;
 mod placing;
 mod surface;
+mod surface_flaws;
+mod surface_report;
 mod validity;
 
 pub use answer::{
@@ -27,5 +29,8 @@ pub use case::{Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};
-pub use surface::{HoleReport, SURFACE_SCHEMA, ShellReport, Surface, SurfaceReport};
+pub use surface::Surface;
+pub use surface_report::{
+    AngleBand, CreaseReport, FlawPlace, HoleReport, SURFACE_SCHEMA, ShellReport, SolvedAs, SurfaceReport, WrittenReport,
+};
 pub use validity::{Regime, SPEED_LIMIT_REYNOLDS};

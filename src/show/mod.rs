@@ -8,7 +8,9 @@ mod fluid_text;
 mod json;
 mod numbers;
 mod sheet;
+mod surface_flaws_text;
 mod surface_text;
+mod surface_units;
 mod tensor_text;
 
 pub use drag_text::{Assumed, drag_text};

@@ -22,7 +22,7 @@ pub mod triangle_rule;
 pub use blueprint::{Blueprint, Geometry, Grading, MacroTriangle};
 pub use chart::{Chart, Placed, Placement};
 pub use examine::{
-    ABSURD_ASPECT, Character, CharacterKind, Examination, Hole, Intersection, Intersections, MendOptions, Mended,
+    ABSURD_ASPECT, Character, CharacterKind, EdgeTurn, Examination, Hole, Intersection, Intersections, MendOptions, Mended,
     NonManifoldEdge, Orientation, PinchedVertex, SLIVER_ASPECT, SMOOTH_SURFACE_CREASE_DEG, Shell, Sliver, SurfaceError,
     examine, mend, usable,
 };
