@@ -302,8 +302,8 @@ fn mending_repairs_a_battered_ball() {
     let text = done.iter().map(ToString::to_string).collect::<Vec<_>>();
     for start in [
         "Merged",
-        "Dropped 1 facets that were there twice",
-        "Dropped 1 facets without area",
+        "Dropped 1 facet that was there twice",
+        "Dropped 1 facet without area",
         "Turned",
         "Closed the hole near",
     ] {
@@ -440,7 +440,10 @@ fn texts_count_and_place_as_people_do() {
     let cube = cuboid([1.0; 3]);
     let far = moved(&cube, [1e6, 0.0, 0.0]);
     let one_hole = refusal(&without(&far, &[0, 1])).to_string();
-    assert!(one_hole.ends_with("a hole of 4 edges, 4.0 long around, near (1000000.5, 0.5, 0.0), beside facet 3"), "{one_hole}");
+    assert!(
+        one_hole.ends_with("a hole of 4 edges, 4.0 long around, near (1000000.5, 0.5, 0.0), beside facet 3"),
+        "{one_hole}"
+    );
     let two = refusal(&without(&cube, &[0, 1, 2, 3])).to_string();
     assert!(two.ends_with("(2 such holes)"), "{two}");
     let ball = without(&icosphere(2), &[3]);

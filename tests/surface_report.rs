@@ -106,7 +106,7 @@ fn each_flaw_is_listed_with_facet_and_place() {
     let twice = report(&with(&cube, &[[c, a, b]]));
     assert_eq!((twice.duplicate_facets, &twice.duplicate_facet_places[0].facets), (1, &vec![4, 13]));
     assert_eq!(twice.non_manifold_edges, 3);
-    says(&twice, &["1 facet is there twice", "facets 4 and 13 at (0.3333, 0.6667, 1.0000) are the same", "has 3 facets:"]);
+    says(&twice, &["1 facet is there twice", "facets 4 and 13 at (0.333, 0.667, 1.000) are the same", "has 3 facets:"]);
 
     let flat = report(&with(&cube, &[[a, a, b]]));
     assert_eq!(flat.degenerate_facet_places[0].facets, [13]);

@@ -3,7 +3,7 @@
 use std::path::{Path, PathBuf};
 
 use clap::{Args, ValueEnum};
-use slowmote::question::{LengthUnit, Surface, SurfaceReport};
+use slowmote::question::{LengthUnit, Surface};
 use slowmote::show::surface_text;
 use slowmote::surface::{FacetedGeometry, FacetedOptions, SurfaceFormat};
 
@@ -90,7 +90,8 @@ impl SurfaceArguments {
         })?;
         let surface = if self.mend { surface.mended() } else { surface };
         let mut report = surface.report(&self.options());
-        self.advise(&mut report);
+        // The library knows its options only; the command line knows what to type.
+        report.next_command = (report.mending_suffices == Some(true)).then(|| self.mending_command());
         if let (Some(path), Some(file), Some(format)) = (&self.write, file, format) {
             let (bytes, mut written) = surface.written(format, &report).map_err(|error| Failure::of(&error))?;
             file.finish(&bytes)?;
@@ -117,14 +118,6 @@ impl SurfaceArguments {
                 .hint("end its name with .stl, .obj, .ply, .off or .msh")
         };
         SurfaceFormat::of_path(path).map(Some).ok_or_else(unknown)
-    }
-
-    /// The library's hints name its options; here the next step is a command.
-    fn advise(&self, report: &mut SurfaceReport) {
-        if report.mending_suffices == Some(true) {
-            let caveat = report.next_step.take().unwrap_or_default();
-            report.next_step = Some(format!("`{}` makes it usable: {caveat}", self.mending_command()));
-        }
     }
 
     fn mending_command(&self) -> String {

@@ -9,8 +9,8 @@ use crate::physical::quantity::format_number;
 use crate::surface::shapes::ShapeSpec;
 use crate::surface::{
     CharacterKind, FacetedGeometry, FacetedOptions, Geometry, MendOptions, Orientation, Point, RawSurface,
-    SMOOTH_SURFACE_CREASE_DEG, ShapeError, SurfaceError, SurfaceFormat, TriangleMesh, WriteError, examine, faceted, mend,
-    read_surface, read_surface_bytes, surface_bytes, usable, weld, weld_tolerance,
+    SMOOTH_SURFACE_CREASE_DEG, ShapeError, SurfaceError, SurfaceFormat, TriangleMesh, WriteError, examine, faceted,
+    mend, read_surface, read_surface_bytes, surface_bytes, usable, weld, weld_tolerance,
 };
 
 /// A surface that was written must keep its area to this part. Single precision keeps it to 1e-6 or so; what a body far
@@ -99,11 +99,7 @@ impl Surface {
     ///
     /// # Errors
     /// [`WriteError`]: the format can't hold the surface.
-    pub fn written(
-        &self,
-        format: SurfaceFormat,
-        seen: &SurfaceReport,
-    ) -> Result<(Vec<u8>, WrittenReport), WriteError> {
+    pub fn written(&self, format: SurfaceFormat, seen: &SurfaceReport) -> Result<(Vec<u8>, WrittenReport), WriteError> {
         let bytes = surface_bytes(&self.mesh, format)?;
         let refusal = match read_surface_bytes(&bytes, format) {
             Ok(raw) => {
@@ -208,6 +204,7 @@ impl Surface {
             refusal: refusal.map(|error| error.to_string()),
             mending_suffices: next.as_ref().and_then(|next| next.mending_suffices),
             next_step: next.map(|next| next.text),
+            next_command: None,
             written: None,
             notes: self.notes.clone(),
         }

@@ -114,9 +114,8 @@ pub(super) fn creases(seen: &Examination, from_deg: f64, scale: Scale) -> Crease
         .collect::<Vec<_>>();
     for turn in &seen.turns {
         let angle = (turn.angle_deg * ANGLE_STEPS).round() / ANGLE_STEPS;
-        let reaches = |band: &AngleBand| {
-            angle > band.from_deg || (angle == band.from_deg && band.from_deg != RIGHT_ANGLE_DEG)
-        };
+        let reaches =
+            |band: &AngleBand| angle > band.from_deg || (angle == band.from_deg && band.from_deg != RIGHT_ANGLE_DEG);
         let found = by_angle.iter().rposition(reaches).unwrap_or(0);
         if let Some(band) = by_angle.get_mut(found) {
             band.edges += 1;

@@ -123,6 +123,8 @@ pub struct SurfaceReport {
     pub mending_suffices: Option<bool>,
     /// What to do next; null if it is usable.
     pub next_step: Option<String>,
+    /// The command that mends it; null where mending doesn't help.
+    pub next_command: Option<String>,
     /// What was written; null if nothing was.
     pub written: Option<WrittenReport>,
     /// What there is to know about how it was read.

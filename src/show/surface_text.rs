@@ -4,7 +4,6 @@ use super::numbers::percent;
 use super::sheet::{Sheet, Style, Tone, sentence};
 use super::surface_flaws_text::{flaws, pieces};
 use super::surface_units::{Units, area, volume};
-use crate::physical::quantity::format_number;
 use crate::question::{CreaseReport, SurfaceReport};
 use crate::surface::SMOOTH_SURFACE_CREASE_DEG;
 
@@ -46,14 +45,24 @@ fn verdict(sheet: &mut Sheet, report: &SurfaceReport) {
         None => {
             sheet.toned_item("verdict", Tone::Good, "usable", &format!(": the solver takes this surface {as_it_is}"));
             if report.unit.is_none() {
-                sheet.item("", "The file doesn't tell its unit, and `drag` must be told: add `--unit um`, or what it is.");
+                sheet.item(
+                    "",
+                    "The file doesn't tell its unit, and `drag` must be told: add `--unit um`, or what it is.",
+                );
             }
         }
         Some(why) => {
             let still = if report.mended.is_some() { ", still" } else { "" };
             sheet.toned_item("verdict", Tone::Bad, "refused", &format!("{still}: {why}"));
             if let Some(step) = &report.next_step {
-                sheet.item("next", &sentence(step));
+                match &report.next_command {
+                    None => sheet.item("next", &sentence(step)),
+                    Some(command) => {
+                        sheet.item("next", &format!("{} Here mending suffices:", sentence(step)));
+                        // Not wrapped, so that it can be copied.
+                        sheet.line("", command);
+                    }
+                }
             }
         }
     }
@@ -71,13 +80,17 @@ fn verdict(sheet: &mut Sheet, report: &SurfaceReport) {
         match (&written.refusal, report.usable) {
             (None, _) => sheet.item("written", &format!("{file}; read back, the solver takes it")),
             (Some(_), false) => {
-                let flaws = if report.mended.is_some() { "with what mending left" } else { "with its flaws, not mended" };
+                let flaws =
+                    if report.mended.is_some() { "with what mending left" } else { "with its flaws, not mended" };
                 sheet.item("written", &format!("{file}, {flaws}: the solver refuses it too"));
             }
             (Some(why), true) => {
                 let file = format!(": {file} loses digits that matter: read back, {why}");
                 sheet.toned_item("written", Tone::Bad, "spoiled", &file);
-                sheet.item("next", "Write .obj, .ply, .off or .msh, which keep all digits, or move the body to the origin.");
+                sheet.item(
+                    "next",
+                    "Write .obj, .ply, .off or .msh, which keep all digits, or move the body to the origin.",
+                );
             }
         }
     }
@@ -159,6 +172,9 @@ fn solved_as(sheet: &mut Sheet, report: &SurfaceReport) {
     let (asked, kept) = (report.creases.from_deg, solved.creases_from_deg);
     if asked != SMOOTH_SURFACE_CREASE_DEG {
         let kept = angle(kept);
-        sheet.item("", &format!("For study, edges of {kept} degrees or more are kept sharp here; `drag` decides itself."));
+        sheet.item(
+            "",
+            &format!("For study, edges of {kept} degrees or more are kept sharp here; `drag` decides itself."),
+        );
     }
 }

@@ -111,12 +111,15 @@ pub enum Mended {
 impl fmt::Display for Mended {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
+            Self::Welded { vertices, largest_move: 0.0 } => {
+                write!(f, "Merged {} with others at the same place.", Count(*vertices, "vertex", "vertices"))
+            }
             Self::Welded { vertices, largest_move } => write!(
                 f,
-                "Merged {} with others at the same place (moved by {largest_move:.2e} at most).",
+                "Merged {} with others beside them (moved by {largest_move:.2e} at most).",
                 Count(*vertices, "vertex", "vertices")
             ),
-            Self::DroppedDuplicates { facets: 1 } => write!(f, "Dropped one facet that was there twice."),
+            Self::DroppedDuplicates { facets: 1 } => write!(f, "Dropped 1 facet that was there twice."),
             Self::DroppedDuplicates { facets } => write!(f, "Dropped {facets} facets that were there twice."),
             Self::DroppedDegenerate { facets } => write!(f, "Dropped {} without area.", facet_count(*facets)),
             Self::CutAtVertex { facets } => write!(f, "Cut {} in two at a vertex on an edge.", facet_count(*facets)),

@@ -59,7 +59,11 @@ fn facets_are_sound(mesh: &TriangleMesh, examination: &Examination) -> Result<()
     }
     if let Some(&facets) = examination.duplicate_facets.first() {
         let count = examination.duplicate_facets.len();
-        return Err(SurfaceError::DuplicateFacet { facets, place: told(mesh.centre(facets[0]), size(examination)), count });
+        return Err(SurfaceError::DuplicateFacet {
+            facets,
+            place: told(mesh.centre(facets[0]), size(examination)),
+            count,
+        });
     }
     Ok(())
 }
@@ -98,7 +102,11 @@ fn orientation_is_outward(mesh: &TriangleMesh, examination: &Examination) -> Res
     }
     let flipped = wrong(false).flat_map(|shell| &shell.flipped);
     if let Some(&facet) = flipped.clone().min() {
-        return Err(SurfaceError::MixedOrientation { facet, place: told(mesh.centre(facet), size(examination)), count: flipped.count() });
+        return Err(SurfaceError::MixedOrientation {
+            facet,
+            place: told(mesh.centre(facet), size(examination)),
+            count: flipped.count(),
+        });
     }
     Ok(())
 }
@@ -128,7 +136,12 @@ fn space_is_sound(examination: &Examination) -> Result<(), SurfaceError> {
     let absurd = || examination.slivers.iter().filter(|sliver| sliver.aspect > ABSURD_ASPECT);
     if let Some(worst) = absurd().max_by(|a, b| a.aspect.total_cmp(&b.aspect)) {
         let count = absurd().count();
-        return Err(SurfaceError::AbsurdSliver { facet: worst.facet, place: told(worst.place, size), aspect: worst.aspect, count });
+        return Err(SurfaceError::AbsurdSliver {
+            facet: worst.facet,
+            place: told(worst.place, size),
+            aspect: worst.aspect,
+            count,
+        });
     }
     Ok(())
 }
