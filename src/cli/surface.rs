@@ -27,8 +27,8 @@ Examples:
   slowmote surface scan.ply --unit um --geometry flat --crease-angle 25
   slowmote surface redcell:7.82um --elements 2000 --write cell.off
 
-What is asked to be written is written, whatever is wrong with it. The exit code is 1 if the solver would refuse the
-surface as it stands at the end, or the file that was written.")]
+What is asked to be written is written, whatever is wrong with it. The exit code is 1 if the solver
+would refuse the surface as it stands at the end, or the file that was written.")]
 pub struct SurfaceArguments {
     /// A surface file (.stl .obj .ply .off .msh), or a shape such as `rod:12x2um`
     #[arg(value_name = "BODY")]
