@@ -87,6 +87,7 @@ fn numbers_below_rounding_are_zero_in_the_text() {
     let seen = report(&icosphere(2));
     assert!(seen.centroid_in_file_units.iter().any(|x| *x != 0.0), "rounding is there");
     says(&seen, &["centroid at (0, 0, 0) um"]);
+    says(&report(&moved(&cuboid([2.0; 3]), [-1.00001, 0.0, 0.0])), &["centroid at (0.000, 1.000, 1.000) um"]);
     // Far from the origin a place needs all its digits.
     says(&report(&moved(&cuboid([2.0; 3]), [1e6, 0.0, 0.5])), &["centroid at (1000001.000, 1.000, 1.500) um"]);
 }

@@ -72,7 +72,11 @@ impl Units {
     pub fn place(&self, place: &[f64; 3]) -> String {
         let coordinate = |x: f64| match self.decimals {
             _ if x.abs() <= self.least => "0".to_owned(),
-            Some(decimals) => format!("{x:.decimals$}"),
+            Some(decimals) => {
+                let shown = format!("{x:.decimals$}");
+                // Not zero, but nothing at this resolution: without the sign.
+                if shown.parse() == Ok(0.0) { shown.trim_start_matches('-').to_owned() } else { shown }
+            }
             None => format!("{x:.3e}"),
         };
         format!("({})", place.map(coordinate).join(&format!(",{GLUE}")))
