@@ -7,7 +7,7 @@ use slowmote::question::{DragAnswer, DragError, DragQuestion, Verdict};
 use slowmote::show::{Assumed, drag_text};
 use slowmote::stokes::solve::SolveError;
 
-use super::case::{Filled, filled};
+use super::case::filled;
 use super::options::{BodyOptions, FluidOptions, MotionOptions, OutputOptions, SolverOptions};
 use super::output::Output;
 use super::progress::Progress;
@@ -44,37 +44,33 @@ impl DragArguments {
     /// # Errors
     /// Input that can't be used, a solve that failed, or an output that can't be written.
     pub fn run(&self) -> Result<Exit, Failure> {
-        let Filled { body: body_options, fluid: fluid_options, name } = filled(&self.body, &self.fluid)?;
-        let fluid = fluid_options.fluid()?;
-        let mut body = body_options.body(self.solver.geometry())?;
-        if let Some(name) = name {
-            body.name = name;
-        }
+        let filled = filled(&self.body, &self.fluid)?;
+        let fluid = filled.fluid.fluid()?;
+        let bodies = filled.standing(self.solver.geometry())?;
         let output = Output::open(&self.output, &[Path::new(&self.body.body)])?;
         self.solver.start_threads()?;
         let question = DragQuestion {
-            body,
+            bodies,
             fluid,
-            placing: body_options.placing(),
-            reference: body_options.reference,
+            reference: self.body.reference,
             motion: self.motion.motion(),
             request: self.solver.request(),
         };
         let progress = Progress::new(self.output.quiet);
         let answer = question.answer(&progress).map_err(|error| failure(&error))?;
         drop(progress);
-        let assumed = self.assumed(&body_options, &fluid_options);
+        let assumed = self.assumed(filled.one(), &filled.fluid);
         output.write(&answer, |style| drag_text(&answer, &assumed, style))?;
         Ok(self.exit(&answer))
     }
 
-    fn assumed(&self, body: &BodyOptions, fluid: &FluidOptions) -> Assumed {
+    fn assumed(&self, body: Option<&BodyOptions>, fluid: &FluidOptions) -> Assumed {
         Assumed {
             fluid: fluid.fluid.is_none(),
             temperature: fluid.temperature.is_none(),
             direction: self.motion.speed.is_some() && self.motion.along.is_none(),
             axis: self.motion.spin.is_some() && self.motion.about.is_none(),
-            file_unit: body.unit.clone(),
+            file_unit: body.and_then(|body| body.unit.clone()),
         }
     }
 
@@ -93,6 +89,11 @@ impl DragArguments {
 fn failure(error: &DragError) -> Failure {
     let failure = Failure::of(error);
     match error {
+        DragError::Overlap { .. } => failure.hint("set them apart, or say `--pieces joined` if they are pieces of one body"),
+        DragError::MayOverlap { .. } => failure.hint("set them farther apart, or give their sizes more narrowly"),
+        DragError::OneBodyOnly { .. } => {
+            failure.hint("the grand resistance gives forces and torques of all motions; leave the option out")
+        }
         DragError::NoVolume { .. } => failure.hint("the body must be a closed surface with its normals outwards"),
         DragError::Solve { source: SolveError::TooLarge { .. }, .. } => {
             failure.hint("ask for less with --accuracy or --elements, or allow more with --memory")

@@ -20,34 +20,35 @@ pub type Tensor = [[f64; 3]; 3];
 pub struct DragAnswer {
     /// Name and version of this layout: `slowmote.drag.1`.
     pub schema: String,
-    /// The body.
-    pub body: BodyAnswer,
+    /// The body; null if there are several.
+    pub body: Option<BodyAnswer>,
     /// The bodies, when there are several; null for one.
     pub bodies: Option<Vec<BodyAnswer>>,
     /// The fluid.
     pub fluid: FluidAnswer,
     /// The walls around it; null in open fluid.
     pub surroundings: Option<Vec<String>>,
-    /// The point about which torques are taken and whose velocity is meant, m.
-    pub reference_point_m: Vector,
-    /// Resistance about the reference point.
-    pub resistance: ResistanceBlocks,
-    /// Mobility about the reference point.
-    pub mobility: MobilityBlocks,
-    /// Resistance of several bodies together, six rows a body; null for one.
+    /// The point about which torques are taken and whose velocity is meant, m; null if there are several bodies.
+    pub reference_point_m: Option<Vector>,
+    /// Resistance about the reference point; null if there are several bodies.
+    pub resistance: Option<ResistanceBlocks>,
+    /// Mobility about the reference point; null if there are several bodies.
+    pub mobility: Option<MobilityBlocks>,
+    /// Resistance of several bodies together, SI: six rows and columns a body, force before torque and velocity before
+    /// rotation, each about that body's own centroid; null for one.
     pub grand_resistance: Option<Vec<Vec<f64>>>,
-    /// Mobility of several bodies together; null for one.
+    /// Mobility of several bodies together, its inverse; null for one.
     pub grand_mobility: Option<Vec<Vec<f64>>>,
-    /// The point about which the coupling of the resistance is symmetric, m.
-    pub centre_of_resistance_m: Vector,
-    /// The point about which the coupling of the mobility is symmetric, m.
-    pub centre_of_mobility_m: Vector,
-    /// Radius of the sphere of equal mobility in the mean over all orientations, m; null near walls.
+    /// The point about which the coupling of the resistance is symmetric, m; null if there are several bodies.
+    pub centre_of_resistance_m: Option<Vector>,
+    /// The point about which the coupling of the mobility is symmetric, m; null if there are several bodies.
+    pub centre_of_mobility_m: Option<Vector>,
+    /// Radius of the sphere of equal mobility in the mean over all orientations, m; null near walls and for several bodies.
     pub hydrodynamic_radius_m: Option<f64>,
-    /// Mean and principal drags.
-    pub principal: PrincipalDrag,
-    /// Brownian motion about the centre of mobility.
-    pub diffusion: Diffusion,
+    /// Mean and principal drags; null if there are several bodies.
+    pub principal: Option<PrincipalDrag>,
+    /// Brownian motion about the centre of mobility; null if there are several bodies.
+    pub diffusion: Option<Diffusion>,
     /// How far the numbers can be trusted.
     pub relative_error: RelativeErrorAnswer,
     /// Force and torque of the motion that was asked for; null if none was.
@@ -60,6 +61,43 @@ pub struct DragAnswer {
     pub cautions: Vec<String>,
     /// How it was solved.
     pub solver: SolverAnswer,
+}
+
+/// What an answer about one body holds beside what every answer does.
+#[derive(Debug, Clone, Copy)]
+pub struct OneBody<'a> {
+    /// See [`DragAnswer::body`].
+    pub body: &'a BodyAnswer,
+    /// See [`DragAnswer::reference_point_m`].
+    pub reference_point_m: Vector,
+    /// See [`DragAnswer::resistance`].
+    pub resistance: &'a ResistanceBlocks,
+    /// See [`DragAnswer::mobility`].
+    pub mobility: &'a MobilityBlocks,
+    /// See [`DragAnswer::centre_of_resistance_m`].
+    pub centre_of_resistance_m: Vector,
+    /// See [`DragAnswer::centre_of_mobility_m`].
+    pub centre_of_mobility_m: Vector,
+    /// See [`DragAnswer::principal`].
+    pub principal: &'a PrincipalDrag,
+    /// See [`DragAnswer::diffusion`].
+    pub diffusion: &'a Diffusion,
+}
+
+impl DragAnswer {
+    /// The tensors of one body; none if there are several.
+    pub fn one(&self) -> Option<OneBody<'_>> {
+        Some(OneBody {
+            body: self.body.as_ref()?,
+            reference_point_m: self.reference_point_m?,
+            resistance: self.resistance.as_ref()?,
+            mobility: self.mobility.as_ref()?,
+            centre_of_resistance_m: self.centre_of_resistance_m?,
+            centre_of_mobility_m: self.centre_of_mobility_m?,
+            principal: self.principal.as_ref()?,
+            diffusion: self.diffusion.as_ref()?,
+        })
+    }
 }
 
 /// The body as it was understood.

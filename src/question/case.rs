@@ -61,6 +61,8 @@ pub struct CaseBody {
     pub surface: String,
     /// Unit of a surface file.
     pub unit: Option<String>,
+    /// What the pieces of a surface file are: `joined` or `apart`.
+    pub pieces: Option<String>,
     /// Place of its centroid: three lengths.
     pub at: Option<[String; 3]>,
     /// Turns, as in `30deg@y`.

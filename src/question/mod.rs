@@ -17,14 +17,14 @@ mod validity;
 
 pub use answer::{
     BodyAnswer, Diffusion, DragAnswer, FlowAnswer, FluidAnswer, InputShare, MeanDrag, MobilityBlocks, MotionAnswer,
-    NumberVerdict, PrincipalDrag, RelativeErrorAnswer, ResistanceBlocks, SolverAnswer, Tensor, Validity, Vector,
-    Verdict,
+    NumberVerdict, OneBody, PrincipalDrag, RelativeErrorAnswer, ResistanceBlocks, SolverAnswer, Tensor, Validity,
+    Vector, Verdict,
 };
 pub use body::{Body, Extent, KnownSize};
-pub use body_source::{BodyError, LengthUnit};
+pub use body_source::{BodyError, LengthUnit, Pieces};
 pub use budget::InputUncertainty;
 pub use case::{Case, CaseBody, CaseError, CaseFluid};
-pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion};
+pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion, StandingBody};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};
 pub use surface::{HoleReport, SURFACE_SCHEMA, ShellReport, Surface, SurfaceReport};

@@ -1,5 +1,7 @@
 //! Integrals of the basis functions: right-hand sides and the null vector.
 
+use std::ops::Range;
+
 use crate::surface::{Panels, Point, triangle_rule};
 
 /// Number of rigid motions of a body.
@@ -15,6 +17,18 @@ pub struct Bodies {
 }
 
 impl Bodies {
+    /// Which panels are whose, where they stand body after body.
+    pub fn ranges(&self, panels: &Panels) -> Vec<Range<usize>> {
+        let count = |body| panels.panels.iter().filter(|panel| self.of_shell[panel.shell] == body).count();
+        let mut from = 0;
+        let range = |body| {
+            let range = from..from + count(body);
+            from = range.end;
+            range
+        };
+        (0..self.references.len()).map(range).collect()
+    }
+
     /// All shells as one body.
     pub fn one(reference: Point, shells: usize) -> Self {
         Self { references: vec![reference], of_shell: vec![0; shells] }

@@ -63,7 +63,7 @@ pub(super) fn extrapolated(fine: &DMatrix<f64>, coarser: &[DMatrix<f64>]) -> DMa
 
 /// Changes from `coarse` to `fine` relative to `whole`: worst direction of the forces and of the torques of all bodies
 /// together, and the coupling of any two.
-fn change(whole: &DMatrix<f64>, fine: &DMatrix<f64>, coarse: &DMatrix<f64>) -> [f64; 3] {
+pub(super) fn change(whole: &DMatrix<f64>, fine: &DMatrix<f64>, coarse: &DMatrix<f64>) -> [f64; 3] {
     let difference = fine - coarse;
     let force = worst_direction(&part(&difference, 0), &part(whole, 0));
     let torque = worst_direction(&part(&difference, 3), &part(whole, 3));

@@ -4,7 +4,8 @@ use std::time::Instant;
 
 use super::dense::Factored;
 use super::{
-    Factor, GrandSolution, Observer, Part, Request, Solution, SolveError, Stage, Statistics, estimate, levels,
+    Factor, GrandSolution, Observer, Part, RelativeError, Request, Solution, SolveError, Stage, Statistics, estimate,
+    levels,
 };
 use crate::stokes::quadrature::{Instructions, PairRules};
 use crate::stokes::rigid::GrandResistance;
@@ -119,6 +120,12 @@ pub fn grand_resistance(
     .ok_or(SolveError::IllConditioned { condition: f64::INFINITY })
 }
 
+/// What two resistances of the same bodies differ in, relative to the first.
+pub fn relative_change(whole: &GrandResistance, other: &GrandResistance) -> RelativeError {
+    let [force, torque, coupling] = estimate::change(&whole.matrix, &other.matrix, &whole.matrix);
+    RelativeError { force, torque, coupling }
+}
+
 /// All bodies cut, each macro edge into its body's number of parts.
 fn subdivided(parts: &[Part], cuts: &[usize]) -> (Panels, Bodies) {
     let mut bodies = Bodies { references: Vec::new(), of_shell: Vec::new() };
@@ -180,6 +187,7 @@ fn on_panels(
         tractions: (0..panels.node_count)
             .map(|node| (0..motions).map(|motion| traction(node, motion)).collect())
             .collect(),
+        panels_of_body: bodies.ranges(&panels),
         statistics: Statistics { triangles: panels.panels.len(), unknowns, factor, condition, residual },
         panels,
     })

@@ -1,5 +1,7 @@
 //! What the solver gives back.
 
+use std::ops::Range;
+
 use nalgebra::{DMatrix, Matrix6};
 use thiserror::Error;
 
@@ -77,6 +79,8 @@ pub struct GrandSolution {
     pub reached: bool,
     /// The surfaces that were solved, body after body.
     pub panels: Panels,
+    /// Which panels are whose.
+    pub panels_of_body: Vec<Range<usize>>,
     /// Traction on the fluid at each node for the six unit motions of each body.
     pub tractions: Vec<Vec<Point>>,
     /// How it was found.
