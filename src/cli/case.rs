@@ -1,6 +1,6 @@
 //! A case file in the place of BODY: what it says stands in for options that were not given.
 
-use std::path::Path;
+use std::path::{Path, PathBuf};
 
 use slowmote::physical::quantity::parse_temperature;
 use slowmote::question::{Case, StandingBody};
@@ -11,6 +11,8 @@ use super::options::{BodyOptions, FluidOptions};
 
 /// What the command line and the case file say together.
 pub struct Filled {
+    /// The case file, if there is one.
+    case: Option<PathBuf>,
     /// The bodies' options, one a body of the case, and what the case calls it.
     bodies: Vec<(BodyOptions, Option<String>)>,
     /// The fluid.
@@ -38,6 +40,15 @@ impl Filled {
         Ok(standing)
     }
 
+    /// The files that were read: the case and all surfaces.
+    pub fn files(&self) -> Vec<PathBuf> {
+        let surfaces =
+            self.bodies.iter().map(|(options, _)| PathBuf::from(&options.body)).filter(|path| path.is_file());
+        let mut files = self.case.iter().cloned().chain(surfaces).collect::<Vec<_>>();
+        files.dedup();
+        files
+    }
+
     /// The only body's options.
     pub fn one(&self) -> Option<&BodyOptions> {
         match self.bodies.as_slice() {
@@ -54,7 +65,7 @@ impl Filled {
 pub fn filled(body: &BodyOptions, fluid: &FluidOptions) -> Result<Filled, Failure> {
     let path = Path::new(&body.body);
     if !path.extension().is_some_and(|extension| extension.eq_ignore_ascii_case("json")) {
-        return Ok(Filled { bodies: vec![(body.clone(), None)], fluid: fluid.clone() });
+        return Ok(Filled { case: None, bodies: vec![(body.clone(), None)], fluid: fluid.clone() });
     }
     let hint = "README shows a case file; quantities are texts with units, as in \"25degC\"";
     let case = Case::read(path).map_err(|error| Failure::of(&error).hint(hint))?;
@@ -72,7 +83,7 @@ pub fn filled(body: &BodyOptions, fluid: &FluidOptions) -> Result<Filled, Failur
         return Err(Failure::new(format!("{option} is for one body, and the case holds {count}"))
             .hint("say in the case file how each of them stands: `at` and `turn`"));
     }
-    let mut filled = Filled { bodies: Vec::new(), fluid: fluid.clone() };
+    let mut filled = Filled { case: Some(path.to_path_buf()), bodies: Vec::new(), fluid: fluid.clone() };
     for one in &case.bodies {
         let mut options = body.clone();
         options.fill(one, path)?;

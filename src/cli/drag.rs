@@ -1,14 +1,18 @@
 //! `slowmote drag BODY`.
 
-use std::path::Path;
+use std::path::PathBuf;
 
 use clap::Args;
 use slowmote::question::{DragAnswer, DragError, DragQuestion, Verdict};
 use slowmote::show::{Assumed, drag_text};
 use slowmote::stokes::solve::SolveError;
 
-use super::case::filled;
-use super::options::{BodyOptions, FluidOptions, MotionOptions, OutputOptions, SolverOptions};
+use super::asked::Asked;
+use super::case::{Filled, filled};
+use super::options::{
+    BodyOptions, DEFAULT_FLUID, DEFAULT_TEMPERATURE, FluidOptions, MotionOptions, OutputOptions, RecordOptions,
+    SolverOptions,
+};
 use super::output::Output;
 use super::progress::Progress;
 use super::{Exit, Failure};
@@ -32,6 +36,8 @@ pub struct DragArguments {
     solver: SolverOptions,
     #[command(flatten)]
     output: OutputOptions,
+    #[command(flatten)]
+    record: RecordOptions,
 
     /// Exit with code 4 if the motion is outside creeping flow
     #[arg(long, help_heading = "Output")]
@@ -43,25 +49,41 @@ impl DragArguments {
     ///
     /// # Errors
     /// Input that can't be used, a solve that failed, or an output that can't be written.
-    pub fn run(&self) -> Result<Exit, Failure> {
+    pub fn run(&self, mut asked: Asked) -> Result<Exit, Failure> {
         let filled = filled(&self.body, &self.fluid)?;
-        let fluid = filled.fluid.fluid()?;
-        let bodies = filled.standing(self.solver.geometry())?;
-        let output = Output::open(&self.output, &[Path::new(&self.body.body)])?;
-        self.solver.start_threads()?;
-        let question = DragQuestion {
-            bodies,
-            fluid,
+        let question = self.question(&filled)?;
+        let assumed = self.assumed(filled.one(), &filled.fluid);
+        settle(&mut asked, &assumed);
+        let files = filled.files();
+        let inputs = files.iter().map(PathBuf::as_path).collect::<Vec<_>>();
+        let output = Output::open(&self.output, &inputs)?.recording(&self.record, asked, &files)?;
+        let answer = self.ask(&question, self.output.quiet)?;
+        output.write(&answer, |style| drag_text(&answer, &assumed, style))?;
+        Ok(self.exit(&answer))
+    }
+
+    /// The answer alone.
+    ///
+    /// # Errors
+    /// As [`DragArguments::run`].
+    pub fn answer(&self, quiet: bool) -> Result<DragAnswer, Failure> {
+        self.ask(&self.question(&filled(&self.body, &self.fluid)?)?, quiet)
+    }
+
+    fn question(&self, filled: &Filled) -> Result<DragQuestion, Failure> {
+        Ok(DragQuestion {
+            fluid: filled.fluid.fluid()?,
+            bodies: filled.standing(self.solver.geometry())?,
             reference: self.body.reference,
             motion: self.motion.motion(),
             request: self.solver.request(),
-        };
-        let progress = Progress::new(self.output.quiet);
-        let answer = question.answer(&progress).map_err(|error| failure(&error))?;
-        drop(progress);
-        let assumed = self.assumed(filled.one(), &filled.fluid);
-        output.write(&answer, |style| drag_text(&answer, &assumed, style))?;
-        Ok(self.exit(&answer))
+        })
+    }
+
+    fn ask(&self, question: &DragQuestion, quiet: bool) -> Result<DragAnswer, Failure> {
+        self.solver.start_threads()?;
+        let progress = Progress::new(quiet);
+        question.answer(&progress).map_err(|error| failure(&error))
     }
 
     fn assumed(&self, body: Option<&BodyOptions>, fluid: &FluidOptions) -> Assumed {
@@ -83,6 +105,19 @@ impl DragArguments {
         } else {
             Exit::Done
         }
+    }
+}
+
+/// Writes down what was taken for granted.
+fn settle(asked: &mut Asked, assumed: &Assumed) {
+    let taken = [
+        (assumed.fluid, "fluid", DEFAULT_FLUID),
+        (assumed.temperature, "temperature", DEFAULT_TEMPERATURE),
+        (assumed.direction, "along", "x"),
+        (assumed.axis, "about", "z"),
+    ];
+    for (_, option, text) in taken.into_iter().filter(|(assumed, ..)| *assumed) {
+        asked.settle(option, text);
     }
 }
 

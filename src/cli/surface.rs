@@ -53,7 +53,7 @@ impl SurfaceArguments {
     ///
     /// # Errors
     /// A surface that can't be read, or a file that can't be written.
-    pub fn run(&self) -> Result<Exit, Failure> {
+    pub fn run(&self, _asked: super::asked::Asked) -> Result<Exit, Failure> {
         let input = Path::new(&self.body);
         let format = self.format()?;
         let output = Output::open(&self.output, &[input])?;

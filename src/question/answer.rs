@@ -4,6 +4,7 @@
 //! rows of numbers in the laboratory frame x, y, z; force before torque, velocity before rotation; forces and torques
 //! of the resistance are those that the body exerts on the fluid, torques about `reference_point_m`.
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::budget::{TORQUE_POWER, force_total, torque_total};
@@ -15,7 +16,7 @@ pub type Vector = [f64; 3];
 pub type Tensor = [[f64; 3]; 3];
 
 /// What `drag` answers.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct DragAnswer {
     /// Name and version of this layout: `slowmote.drag.1`.
@@ -101,7 +102,7 @@ impl DragAnswer {
 }
 
 /// The body as it was understood.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct BodyAnswer {
     /// What it was called: a shape as it was written, or a file's name.
@@ -121,7 +122,7 @@ pub struct BodyAnswer {
 }
 
 /// The fluid as it was understood.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FluidAnswer {
     /// Its name.
@@ -139,7 +140,7 @@ pub struct FluidAnswer {
 }
 
 /// `[F; T] = R [U; Omega]`, F and T by the body on the fluid.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct ResistanceBlocks {
     /// Force for velocity, N.s/m.
@@ -153,7 +154,7 @@ pub struct ResistanceBlocks {
 }
 
 /// `[U; Omega] = M [F; T]`, the inverse of the resistance.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MobilityBlocks {
     /// Velocity for force, m/(N.s).
@@ -167,7 +168,7 @@ pub struct MobilityBlocks {
 }
 
 /// The drag without its axes: what the body feels on average, at least and at most.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct PrincipalDrag {
     /// Mean over orientations; null near walls.
@@ -183,7 +184,7 @@ pub struct PrincipalDrag {
 }
 
 /// The mean over orientations, from the mobility about its centre.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MeanDrag {
     /// Drag of a freely tumbling body, `6 pi mu R_h`, N.s/m.
@@ -193,7 +194,7 @@ pub struct MeanDrag {
 }
 
 /// Brownian motion about the centre of mobility, `k_B T M`.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Diffusion {
     /// Translation, m2/s.
@@ -206,7 +207,7 @@ pub struct Diffusion {
 ///
 /// `total` is the sum of the solver's worst, of `geometry` and of `inputs`. The sum, and no root of squares: the
 /// solver's error and the geometry's are systematic and mostly of one sign.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RelativeErrorAnswer {
     /// Solver, force-velocity block; null if there is no estimate.
@@ -248,7 +249,7 @@ impl RelativeErrorAnswer {
 }
 
 /// What one uncertain input does to the answer, to first order.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct InputShare {
     /// Which input.
@@ -262,7 +263,7 @@ pub struct InputShare {
 }
 
 /// The motion that was asked for, and what the **fluid exerts on the body**.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MotionAnswer {
     /// Velocity of the reference point, m/s.
@@ -282,7 +283,7 @@ pub struct MotionAnswer {
 }
 
 /// The body in a background flow.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FlowAnswer {
     /// Force of the fluid on the held body, N.
@@ -298,7 +299,7 @@ pub struct FlowAnswer {
 }
 
 /// How well creeping flow holds, from best to worst.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize, JsonSchema)]
 #[serde(rename_all = "lowercase")]
 pub enum Verdict {
     /// What is left out does not matter.
@@ -324,7 +325,7 @@ impl Verdict {
 }
 
 /// The verdict on the regime.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Validity {
     /// The worst verdict of the numbers that apply; null if none does, because no motion was given.
@@ -344,7 +345,7 @@ pub struct Validity {
 }
 
 /// One dimensionless number and what it says.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct NumberVerdict {
     /// Its name.
@@ -360,7 +361,7 @@ pub struct NumberVerdict {
 }
 
 /// How the answer was found.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct SolverAnswer {
     /// Version of this program.
@@ -369,6 +370,8 @@ pub struct SolverAnswer {
     pub triangles: usize,
     /// Unknowns, three a node.
     pub unknowns: usize,
+    /// A fingerprint of the mesh: equal meshes have equal ones.
+    pub mesh: String,
     /// What solved the system.
     pub method: String,
     /// Estimated condition number of the system.

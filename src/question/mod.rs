@@ -12,6 +12,8 @@ mod cautions;
 mod drag;
 mod fluid;
 mod placing;
+mod record;
+mod schemas;
 mod surface;
 mod validity;
 
@@ -23,9 +25,11 @@ pub use answer::{
 pub use body::{Body, Extent, KnownSize};
 pub use body_source::{BodyError, LengthUnit, Pieces};
 pub use budget::InputUncertainty;
-pub use case::{Case, CaseBody, CaseError, CaseFluid};
+pub use case::{CASE_SCHEMA, Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion, StandingBody};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
 pub use placing::{Placing, Turn};
+pub use record::{AGAIN_SCHEMA, AgainReport, Comparison, Difference, RECORD_SCHEMA, Record, RecordError, RecordedFile};
+pub use schemas::Layout;
 pub use surface::{HoleReport, SURFACE_SCHEMA, ShellReport, Surface, SurfaceReport};
 pub use validity::{Regime, SPEED_LIMIT_REYNOLDS};

@@ -2,6 +2,7 @@
 
 use std::path::Path;
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::{BodyError, LengthUnit, Vector};
@@ -33,7 +34,7 @@ pub struct Surface {
 }
 
 /// What there is to say of a surface. Lengths are in file units; where the unit is known, the size stands in SI too.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 #[allow(missing_docs, reason = "the keys say what they are")]
 pub struct SurfaceReport {
@@ -85,7 +86,7 @@ pub struct SurfaceReport {
 }
 
 /// One piece of a surface, in file units.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 #[allow(missing_docs, reason = "the keys say what they are")]
 pub struct ShellReport {
@@ -98,7 +99,7 @@ pub struct ShellReport {
 }
 
 /// A hole, in file units.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 #[allow(missing_docs, reason = "the keys say what they are")]
 pub struct HoleReport {

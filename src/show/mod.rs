@@ -3,6 +3,7 @@
 //! Everything here turns an answer into a string; nothing here prints, and nothing here computes physics.
 //! JSON is a promise (see [`crate::question::DragAnswer`]); the text is for eyes and may change.
 
+mod again_text;
 mod drag;
 mod fluid_text;
 mod json;
@@ -11,6 +12,7 @@ mod sheet;
 mod surface_text;
 mod tensor_text;
 
+pub use again_text::again_text;
 pub use drag::{Assumed, drag_text};
 pub use fluid_text::{fluid_catalogue_text, fluid_text};
 pub use json::to_json;

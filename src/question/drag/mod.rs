@@ -5,6 +5,7 @@
 
 mod blocks;
 mod error;
+mod fingerprint;
 mod motion;
 mod one;
 mod question;

@@ -2,6 +2,7 @@
 
 use std::time::Instant;
 
+use super::fingerprint::fingerprint;
 use super::scene::{Scene, Standing};
 use super::trust::relative_error;
 use super::{DragError, PrescribedMotion, StandingBody};
@@ -174,6 +175,7 @@ fn solver_answer(solution: &GrandSolution, seconds: f64) -> SolverAnswer {
         version: env!("CARGO_PKG_VERSION").to_owned(),
         triangles: statistics.triangles,
         unknowns: statistics.unknowns,
+        mesh: fingerprint(&solution.panels),
         method: method.to_owned(),
         condition: statistics.condition,
         residual: statistics.residual,
