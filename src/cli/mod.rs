@@ -3,7 +3,9 @@
 //! Everything that touches the world outside the library stands here: arguments, files, the terminal, the clock's
 //! patience, memory and threads, exit codes.
 
+mod again;
 mod arguments;
+mod asked;
 mod bug;
 mod case;
 mod drag;
@@ -14,6 +16,7 @@ mod machine;
 mod options;
 mod output;
 mod progress;
+mod schema;
 mod shell_word;
 mod surface;
 

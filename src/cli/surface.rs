@@ -3,11 +3,12 @@
 use std::path::{Path, PathBuf};
 
 use clap::{Args, ValueEnum};
-use slowmote::question::{LengthUnit, Surface};
+use slowmote::question::{LengthUnit, Surface, SurfaceReport};
 use slowmote::show::surface_text;
 use slowmote::surface::{FacetedGeometry, FacetedOptions, SurfaceFormat};
 
-use super::options::{OutputOptions, length_unit};
+use super::asked::Asked;
+use super::options::{OutputOptions, RecordOptions, length_unit};
 use super::output::{NewFile, Output};
 use super::shell_word::shell_word;
 use super::{Exit, Failure};
@@ -60,6 +61,8 @@ pub struct SurfaceArguments {
 
     #[command(flatten)]
     output: OutputOptions,
+    #[command(flatten)]
+    record: RecordOptions,
 }
 
 /// What facets stand for.
@@ -76,22 +79,17 @@ impl SurfaceArguments {
     ///
     /// # Errors
     /// A surface that can't be read, or a file that can't be written.
-    pub fn run(&self) -> Result<Exit, Failure> {
+    pub fn run(&self, asked: Asked) -> Result<Exit, Failure> {
         let input = Path::new(&self.body);
         let format = self.format()?;
-        let output = Output::open(&self.output, &[input])?;
+        let read = if input.is_file() { vec![input.to_path_buf()] } else { Vec::new() };
+        let output = Output::open(&self.output, &[input])?.recording(&self.record, asked, &read)?;
         let file = match &self.write {
             Some(path) => Some(NewFile::create("surface", path, &[input])?),
             None => None,
         };
-        let surface = Surface::read(&self.body, self.unit.as_ref(), self.elements).map_err(|error| {
-            let hints = error.hints();
-            hints.into_iter().fold(Failure::of(&error), Failure::hint)
-        })?;
-        let surface = if self.mend { surface.mended() } else { surface };
-        let mut report = surface.report(&self.options());
-        // The library knows its options only; the command line knows what to type.
-        report.next_command = (report.mending_suffices == Some(true)).then(|| self.mending_command());
+        let surface = self.surface()?;
+        let mut report = self.report(&surface);
         if let (Some(path), Some(file), Some(format)) = (&self.write, file, format) {
             let (bytes, mut written) = surface.written(format, &report).map_err(|error| Failure::of(&error))?;
             file.finish(&bytes)?;
@@ -101,6 +99,29 @@ impl SurfaceArguments {
         let usable = report.usable && report.written.as_ref().is_none_or(|written| written.usable);
         output.write(&report, |style| surface_text(&report, style))?;
         Ok(if usable { Exit::Done } else { Exit::Failed })
+    }
+
+    /// The answer alone, with nothing written.
+    ///
+    /// # Errors
+    /// A surface that can't be read.
+    pub fn answer(&self) -> Result<SurfaceReport, Failure> {
+        Ok(self.report(&self.surface()?))
+    }
+
+    fn surface(&self) -> Result<Surface, Failure> {
+        let surface = Surface::read(&self.body, self.unit.as_ref(), self.elements).map_err(|error| {
+            let hints = error.hints();
+            hints.into_iter().fold(Failure::of(&error), Failure::hint)
+        })?;
+        Ok(if self.mend { surface.mended() } else { surface })
+    }
+
+    fn report(&self, surface: &Surface) -> SurfaceReport {
+        let mut report = surface.report(&self.options());
+        // The library knows its options only; the command line knows what to type.
+        report.next_command = (report.mending_suffices == Some(true)).then(|| self.mending_command());
+        report
     }
 
     fn options(&self) -> FacetedOptions {

@@ -1,5 +1,6 @@
 //! What there is to say of a surface, as it is written to JSON.
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::Vector;
@@ -13,7 +14,7 @@ pub const SURFACE_SCHEMA: &str = "slowmote.surface.1";
 /// where the unit is not known. Facets are counted from 1, in the order of the file; polygons of the file count as
 /// the triangles that they were cut into. After mending, all of it is about the mended surface. Lists of places are
 /// cut off after some; the counts beside them are whole.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct SurfaceReport {
     /// `slowmote.surface.1`.
@@ -132,7 +133,7 @@ pub struct SurfaceReport {
 }
 
 /// One piece of a surface.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct ShellReport {
     /// Its first facet.
@@ -162,7 +163,7 @@ pub struct ShellReport {
 }
 
 /// A hole.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct HoleReport {
     /// Number of edges around it.
@@ -180,7 +181,7 @@ pub struct HoleReport {
 }
 
 /// Where one flaw is.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FlawPlace {
     /// The facets it is about.
@@ -194,7 +195,7 @@ pub struct FlawPlace {
 }
 
 /// Where the surface turns: the angle between the normals of the two facets of an edge, 0 in a plane.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct CreaseReport {
     /// Edges that turn by this angle or more are counted as creases.
@@ -212,7 +213,7 @@ pub struct CreaseReport {
 }
 
 /// The edges whose turn lies in a range. An angle is rounded to a hundredth of a degree before it is sorted in.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct AngleBand {
     /// The range begins here.
@@ -228,7 +229,7 @@ pub struct AngleBand {
 }
 
 /// What the solver makes of a surface.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct SolvedAs {
     /// `flat` or `curved`.
@@ -244,7 +245,7 @@ pub struct SolvedAs {
 }
 
 /// A surface file that was written.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct WrittenReport {
     /// Where.

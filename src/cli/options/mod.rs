@@ -8,8 +8,8 @@ mod solver;
 mod values;
 
 pub use body::{BodyOptions, length_unit};
-pub use fluid::{FluidOptions, fluid_of};
+pub use fluid::{DEFAULT_FLUID, DEFAULT_TEMPERATURE, FluidOptions, fluid_of};
 pub use motion::MotionOptions;
-pub use output::OutputOptions;
+pub use output::{OutputOptions, RecordOptions};
 pub use solver::SolverOptions;
 pub use values::parse_with;
