@@ -49,7 +49,9 @@ impl AgainArguments {
             .0
             .answer(self.output.quiet)
             .map_err(told)?;
-        let comparison = Comparison::of(&record, &now).map_err(|error| told(Failure::of(&error)))?;
+        let comparison = Comparison::of(&record, &now).map_err(|error| {
+            told(Failure::of(&error)).hint("the record may be of a version with another layout of answers")
+        })?;
         let mesh = |answer: &serde_json::Value| answer.pointer("/solver/mesh").cloned();
         let changed = record.files.iter().filter(|file| !file.is_still(&folder.join(&file.path)));
         let name = self.record.file_name().unwrap_or(self.record.as_os_str()).to_string_lossy().into_owned();

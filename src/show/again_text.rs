@@ -3,7 +3,7 @@
 use serde_json::Value;
 
 use super::numbers::percent;
-use super::sheet::{Sheet, Style, Tone, sentence};
+use super::sheet::{Sheet, Style, Tone};
 use crate::question::{AgainReport, Difference};
 
 /// Differences beyond these are counted only.
@@ -47,7 +47,7 @@ pub fn again_text(report: &AgainReport, style: Style) -> String {
         sheet.gap();
     }
     for difference in report.differences.iter().take(MOST_LISTED) {
-        sheet.item("differs", &sentence(&told(difference)));
+        sheet.item("differs", &told(difference));
     }
     let more = report.differences.len().saturating_sub(MOST_LISTED);
     if more > 0 {
@@ -58,7 +58,10 @@ pub fn again_text(report: &AgainReport, style: Style) -> String {
 
 fn told(difference: &Difference) -> String {
     let value = |value: &Value| {
-        let text = value.to_string();
+        let text = match value.as_array().map(Vec::as_slice) {
+            Some([one]) => one.to_string(),
+            _ => value.to_string(),
+        };
         match text.char_indices().nth(LONGEST_VALUE) {
             Some((end, _)) => format!("{}...", &text[..end]),
             None => text,
@@ -68,5 +71,5 @@ fn told(difference: &Difference) -> String {
         (Some(by), Some(allowed)) => format!(", by {} where {} is allowed", percent(by), percent(allowed)),
         _ => String::new(),
     };
-    format!("{}: {} then, {} now{by}", difference.key, value(&difference.then), value(&difference.now))
+    format!("{} was {} and is {}{by}", difference.key, value(&difference.then), value(&difference.now))
 }
