@@ -35,7 +35,7 @@ fn mesh(shape: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error>> {
 
 fn facets_of(name: &str, triangles: usize) -> Result<TriangleMesh, Box<dyn Error>> {
     const MICROMETRE: f64 = 1e-6;
-    let blueprint = Shape::parse(name)?.blueprint();
+    let blueprint = Shape::parse(name)?.blueprint().ungraded();
     let panels = blueprint.subdivide(blueprint.cuts_for(triangles), Geometry::Flat);
     Ok(TriangleMesh::of_panels(&panels, 1.0 / MICROMETRE))
 }

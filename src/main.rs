@@ -5,8 +5,6 @@ mod cli;
 use std::io::{IsTerminal, Write};
 use std::process::ExitCode;
 
-use clap::Parser;
-
 use cli::{Arguments, Exit, catch_bugs, wants_colour};
 
 fn main() -> ExitCode {
@@ -14,15 +12,15 @@ fn main() -> ExitCode {
 }
 
 fn run() -> Exit {
-    let arguments = match Arguments::try_parse() {
-        Ok(arguments) => arguments,
+    let (arguments, asked) = match Arguments::of_line(std::env::args_os()) {
+        Ok(parsed) => parsed,
         Err(told) => {
             // Help and version come this way too. If nobody reads them, there is nobody to tell.
             let _ = told.print();
             return if told.use_stderr() { Exit::Usage } else { Exit::Done };
         }
     };
-    match arguments.run() {
+    match arguments.run(asked) {
         Ok(exit) => exit,
         Err(failure) => {
             let stderr = std::io::stderr();

@@ -16,7 +16,7 @@ fn answer(line: &str) -> DragAnswer {
 fn a_case_asks_what_the_options_ask() {
     let case = answer("drag examples/cases/settled-cell.json --elements 144 --json");
     let options = answer("drag redcell:7.82um --fluid pbs --temperature 25degC --turn 30deg@y --elements 144 --json");
-    assert_eq!(case.body.name, "red cell, tilted");
+    assert_eq!(case.body.as_ref().unwrap().name, "red cell, tilted");
     assert_eq!(case.resistance, options.resistance);
     assert_eq!(case.fluid.viscosity_pa_s, options.fluid.viscosity_pa_s);
 }
@@ -24,10 +24,10 @@ fn a_case_asks_what_the_options_ask() {
 #[test]
 fn a_surface_file_counts_from_the_folder_of_the_case() {
     let case = answer("drag examples/cases/bracket-in-oil.json --elements 80 --json");
-    assert_eq!(case.body.name, "angle bracket");
+    assert_eq!(case.body.as_ref().unwrap().name, "angle bracket");
     // 20 x 6 + 6 x 10 um2, 8 um high.
-    assert!((case.body.volume_m3 / 1.44e-15 - 1.0).abs() < 1e-9);
-    assert!((case.body.centroid_m[2] - 12e-6).abs() < 1e-12);
+    assert!((case.body.as_ref().unwrap().volume_m3 / 1.44e-15 - 1.0).abs() < 1e-9);
+    assert!((case.body.as_ref().unwrap().centroid_m[2] - 12e-6).abs() < 1e-12);
     assert!((case.fluid.viscosity_pa_s - 0.097).abs() < 1e-12);
 }
 
@@ -58,7 +58,7 @@ fn what_a_case_can_not_be_is_told() {
         (&format!("{{{bodies}, \"fluid\": {{\"temperature\": \"25degC\"}}}}"), "viscosity and density"),
         (&format!("{{{bodies}, \"fluid\": {{\"name\": \"watr\"}}}}"), "watr"),
         (&format!("{{{bodies}, \"fluid\": {{\"name\": \"water\", \"temperature\": \"25um\"}}}}"), "temperature"),
-        ("{\"bodies\": [{\"surface\": \"sphere:2um\"}, {\"surface\": \"sphere:2um\"}]}", "2 bodies"),
+        ("{\"bodies\": [{\"surface\": \"sphere:2um\", \"pieces\": \"glued\"}]}", "glued"),
         ("{\"bodies\": [{\"surface\": \"sphere:2um\", \"turn\": [\"30deg\"]}]}", "30deg"),
         ("{\"bodies\": [{\"surface\": \"sphere:2um\", \"at\": [\"0um\", \"0um\", \"12\"]}]}", "no unit"),
         ("{\"bodies\": [{\"surface\": \"sphere:2um\", \"at\": [\"0um\"]}]}", "length 1"),

@@ -20,6 +20,11 @@ fn help_of_fluid() {
 }
 
 #[test]
+fn help_of_surface() {
+    insta::assert_snapshot!("help_surface", slowmote("surface --help").ends_with(0).stdout);
+}
+
+#[test]
 fn version() {
     assert_eq!(slowmote("--version").ends_with(0).stdout, concat!("slowmote ", env!("CARGO_PKG_VERSION"), "\n"));
 }

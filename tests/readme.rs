@@ -158,10 +158,10 @@ fn every_row_of_the_validation_table_holds() {
         });
         let viscosity = answer.fluid.viscosity_pa_s;
         let (computed, stated) = if row.torque {
-            let torque = answer.resistance.torque_rotation_n_m_s[row.axis][row.axis];
+            let torque = answer.resistance.unwrap().torque_rotation_n_m_s[row.axis][row.axis];
             (torque / (8.0 * PI * viscosity) * 1e18, answer.relative_error.torque)
         } else {
-            let drag = answer.resistance.force_velocity_n_s_per_m[row.axis][row.axis];
+            let drag = answer.resistance.unwrap().force_velocity_n_s_per_m[row.axis][row.axis];
             (drag / (6.0 * PI * viscosity) * 1e6, answer.relative_error.force)
         };
         let name = format!("{} {} {}", row.body, if row.torque { "torque" } else { "drag" }, row.axis);

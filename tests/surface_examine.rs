@@ -96,7 +96,7 @@ fn open_surfaces_are_refused_with_the_hole() {
     assert!(
         refusal(&without(&cuboid([1.0; 3]), &[0, 1]))
             .to_string()
-            .contains("a hole of 4 edges and length 4.000000 near (0.5, 0.5, 0.0)")
+            .contains("a hole of 4 edges, 4.0 long around, near (0.5, 0.5, 0.0)")
     );
 }
 
@@ -302,8 +302,8 @@ fn mending_repairs_a_battered_ball() {
     let text = done.iter().map(ToString::to_string).collect::<Vec<_>>();
     for start in [
         "Merged",
-        "Dropped 1 facets that were there twice",
-        "Dropped 1 facets without area",
+        "Dropped 1 facet that was there twice",
+        "Dropped 1 facet without area",
         "Turned",
         "Closed the hole near",
     ] {
@@ -433,4 +433,36 @@ proptest! {
         prop_assert_eq!(after.genus, before.genus);
         prop_assert_eq!(after.character.kind, before.character.kind);
     }
+}
+
+#[test]
+fn texts_count_and_place_as_people_do() {
+    let cube = cuboid([1.0; 3]);
+    let far = moved(&cube, [1e6, 0.0, 0.0]);
+    let one_hole = refusal(&without(&far, &[0, 1])).to_string();
+    assert!(
+        one_hole.ends_with("a hole of 4 edges, 4.0 long around, near (1000000.5, 0.5, 0.0), beside facet 3"),
+        "{one_hole}"
+    );
+    let two = refusal(&without(&cube, &[0, 1, 2, 3])).to_string();
+    assert!(two.ends_with("(2 such holes)"), "{two}");
+    let ball = without(&icosphere(2), &[3]);
+    let done = mend(&ball, &MendOptions::default()).1;
+    let text = done.iter().map(ToString::to_string).collect::<String>();
+    assert!(text.starts_with("Closed the hole near (") && text.ends_with("long around, with 1 facet."), "{text}");
+    // What mending can't do has a hint of its own, which doesn't send the user back to mending.
+    for error in [refusal(&without(&cube, &[0, 1])), refusal(&turned_inside_out(&cube))] {
+        assert!(error.hint().contains("mending") && !error.hint_beyond_mending().contains("mending"));
+    }
+}
+
+#[test]
+fn each_edge_has_its_turn() {
+    let found = examine(&cuboid([2.0, 3.0, 5.0]));
+    assert_eq!(found.turns.len(), found.edges);
+    assert_eq!(found.creases_from(40.0), found.creases);
+    assert_eq!(found.creases_from(91.0), (0, 0.0));
+    let (all, length) = found.creases_from(0.0);
+    let diagonals = [[2.0_f64, 3.0], [2.0, 5.0], [3.0, 5.0]].map(|[a, b]| 2.0 * a.hypot(b)).iter().sum::<f64>();
+    assert!(all == 18 && (length - 40.0 - diagonals).abs() < 1e-9);
 }

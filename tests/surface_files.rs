@@ -234,7 +234,10 @@ mod obj {
                     usemtl red\ns off\nf 1/1/1 2//1 3/1 \\\n 4\nf -4 -2 -1\n";
         let surface = read(text.as_bytes(), OBJ);
         assert_eq!(surface.mesh.facets(), [[0, 1, 2], [0, 2, 3], [0, 2, 3]]);
-        assert_eq!(surface.notes, ["1 of 2 facets have more than three corners and were cut into triangles."]);
+        assert_eq!(
+            surface.notes,
+            ["1 of 2 facets have more than three corners and were cut into triangles, which count as facets."]
+        );
     }
 
     #[test]

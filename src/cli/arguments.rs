@@ -1,10 +1,17 @@
 //! The program's arguments as a whole.
 
-use clap::{Parser, Subcommand};
+use std::ffi::OsString;
 
+use clap::{CommandFactory, FromArgMatches, Parser, Subcommand};
+use serde::Serialize;
+use serde_json::Value;
+
+use super::again::AgainArguments;
+use super::asked::Asked;
 use super::drag::DragArguments;
 use super::fluid::FluidArguments;
 use super::regime::RegimeArguments;
+use super::schema::SchemaArguments;
 use super::surface::SurfaceArguments;
 use super::{Exit, Failure};
 
@@ -45,19 +52,59 @@ pub enum Command {
     Surface(SurfaceArguments),
     /// Viscosity and density of a fluid, and how well they are known; without a name, the list of fluids
     Fluid(FluidArguments),
+    /// Computes a recorded answer again and says what differs beyond the stated errors
+    Again(AgainArguments),
+    /// The JSON Schema of an input or output; without a name, the list of them
+    Schema(SchemaArguments),
 }
 
 impl Arguments {
+    /// Reads a command line, the program's name first; also what it asks, in its own words.
+    ///
+    /// # Errors
+    /// A usage error, or help and version, which come the same way.
+    pub fn of_line(line: impl IntoIterator<Item = OsString>) -> Result<(Self, Asked), clap::Error> {
+        let program = Self::command();
+        let matches = program.clone().try_get_matches_from(line)?;
+        let arguments = Self::from_arg_matches(&matches)?;
+        let asked = Asked::of(&program, &matches).unwrap_or_default();
+        Ok((arguments, asked))
+    }
+
     /// Does what was asked for.
     ///
     /// # Errors
     /// A [`Failure`] to be told on stderr.
-    pub fn run(&self) -> Result<Exit, Failure> {
+    pub fn run(&self, asked: Asked) -> Result<Exit, Failure> {
         match &self.command {
-            Command::Drag(arguments) => arguments.run(),
-            Command::Regime(arguments) => arguments.run(),
-            Command::Surface(arguments) => arguments.run(),
-            Command::Fluid(arguments) => arguments.run(),
+            Command::Drag(arguments) => arguments.run(asked),
+            Command::Regime(arguments) => arguments.run(asked),
+            Command::Surface(arguments) => arguments.run(asked),
+            Command::Fluid(arguments) => arguments.run(asked),
+            Command::Again(arguments) => arguments.run(),
+            Command::Schema(arguments) => arguments.run(),
         }
     }
+
+    /// The answer alone, of a command whose answers can be recorded.
+    ///
+    /// # Errors
+    /// As [`Arguments::run`]; also a command without an answer of its own.
+    pub fn answer(&self, quiet: bool) -> Result<Value, Failure> {
+        match &self.command {
+            Command::Drag(arguments) => as_value(&arguments.answer(quiet)?),
+            Command::Regime(arguments) => as_value(&arguments.answer()?),
+            Command::Surface(arguments) => as_value(&arguments.answer()?),
+            Command::Fluid(arguments) => arguments.answer(),
+            Command::Again(_) | Command::Schema(_) => {
+                Err(Failure::new("this command gives no answer that can be recorded")
+                    .hint("give a record that `--record FILE` wrote"))
+            }
+        }
+    }
+}
+
+/// An answer as JSON.
+pub fn as_value<T: Serialize>(answer: &T) -> Result<Value, Failure> {
+    serde_json::to_value(answer).map_err(|error| Failure::of(&error).during("the answer can't be put into JSON"))
 }

@@ -1,14 +1,18 @@
 //! `slowmote drag BODY`.
 
-use std::path::Path;
+use std::path::PathBuf;
 
 use clap::Args;
 use slowmote::question::{DragAnswer, DragError, DragQuestion, Verdict};
 use slowmote::show::{Assumed, drag_text};
 use slowmote::stokes::solve::SolveError;
 
+use super::asked::Asked;
 use super::case::{Filled, filled};
-use super::options::{BodyOptions, FluidOptions, MotionOptions, OutputOptions, SolverOptions};
+use super::options::{
+    BodyOptions, DEFAULT_FLUID, DEFAULT_TEMPERATURE, FluidOptions, MotionOptions, OutputOptions, RecordOptions,
+    SolverOptions,
+};
 use super::output::Output;
 use super::progress::Progress;
 use super::{Exit, Failure};
@@ -32,6 +36,8 @@ pub struct DragArguments {
     solver: SolverOptions,
     #[command(flatten)]
     output: OutputOptions,
+    #[command(flatten)]
+    record: RecordOptions,
 
     /// Exit with code 4 if the motion is outside creeping flow
     #[arg(long, help_heading = "Output")]
@@ -43,38 +49,50 @@ impl DragArguments {
     ///
     /// # Errors
     /// Input that can't be used, a solve that failed, or an output that can't be written.
-    pub fn run(&self) -> Result<Exit, Failure> {
-        let Filled { body: body_options, fluid: fluid_options, name, .. } = filled(&self.body, &self.fluid)?;
-        let fluid = fluid_options.fluid()?;
-        let mut body = body_options.body(self.solver.geometry())?;
-        if let Some(name) = name {
-            body.name = name;
-        }
-        let output = Output::open(&self.output, &[Path::new(&self.body.body)])?;
-        self.solver.start_threads()?;
-        let question = DragQuestion {
-            body,
-            fluid,
-            placing: body_options.placing(),
-            reference: body_options.reference,
-            motion: self.motion.motion(),
-            request: self.solver.request(),
-        };
-        let progress = Progress::new(self.output.quiet);
-        let answer = question.answer(&progress).map_err(|error| failure(&error))?;
-        drop(progress);
-        let assumed = self.assumed(&body_options, &fluid_options);
+    pub fn run(&self, mut asked: Asked) -> Result<Exit, Failure> {
+        let filled = filled(&self.body, &self.fluid)?;
+        let question = self.question(&filled)?;
+        let assumed = self.assumed(filled.one(), &filled.fluid);
+        settle(&mut asked, &assumed);
+        let files = filled.files();
+        let inputs = files.iter().map(PathBuf::as_path).collect::<Vec<_>>();
+        let output = Output::open(&self.output, &inputs)?.recording(&self.record, asked, &files)?;
+        let answer = self.ask(&question, self.output.quiet)?;
         output.write(&answer, |style| drag_text(&answer, &assumed, style))?;
         Ok(self.exit(&answer))
     }
 
-    fn assumed(&self, body: &BodyOptions, fluid: &FluidOptions) -> Assumed {
+    /// The answer alone.
+    ///
+    /// # Errors
+    /// As [`DragArguments::run`].
+    pub fn answer(&self, quiet: bool) -> Result<DragAnswer, Failure> {
+        self.ask(&self.question(&filled(&self.body, &self.fluid)?)?, quiet)
+    }
+
+    fn question(&self, filled: &Filled) -> Result<DragQuestion, Failure> {
+        Ok(DragQuestion {
+            fluid: filled.fluid.fluid()?,
+            bodies: filled.standing(self.solver.geometry())?,
+            reference: self.body.reference,
+            motion: self.motion.motion(),
+            request: self.solver.request(),
+        })
+    }
+
+    fn ask(&self, question: &DragQuestion, quiet: bool) -> Result<DragAnswer, Failure> {
+        self.solver.start_threads()?;
+        let progress = Progress::new(quiet);
+        question.answer(&progress).map_err(|error| failure(&error))
+    }
+
+    fn assumed(&self, body: Option<&BodyOptions>, fluid: &FluidOptions) -> Assumed {
         Assumed {
             fluid: fluid.fluid.is_none(),
             temperature: fluid.temperature.is_none(),
             direction: self.motion.speed.is_some() && self.motion.along.is_none(),
             axis: self.motion.spin.is_some() && self.motion.about.is_none(),
-            file_unit: body.unit.clone(),
+            file_unit: body.and_then(|body| body.unit.clone()),
         }
     }
 
@@ -90,9 +108,27 @@ impl DragArguments {
     }
 }
 
+/// Writes down what was taken for granted.
+pub fn settle(asked: &mut Asked, assumed: &Assumed) {
+    let taken = [
+        (assumed.fluid, "fluid", DEFAULT_FLUID),
+        (assumed.temperature, "temperature", DEFAULT_TEMPERATURE),
+        (assumed.direction, "along", "x"),
+        (assumed.axis, "about", "z"),
+    ];
+    for (_, option, text) in taken.into_iter().filter(|(assumed, ..)| *assumed) {
+        asked.settle(option, text);
+    }
+}
+
 fn failure(error: &DragError) -> Failure {
     let failure = Failure::of(error);
     match error {
+        DragError::Overlap { .. } => failure.hint("set them apart, or say `--pieces joined` if they are pieces of one body"),
+        DragError::MayOverlap { .. } => failure.hint("set them farther apart, or give their sizes more narrowly"),
+        DragError::OneBodyOnly { .. } => {
+            failure.hint("the grand resistance gives forces and torques of all motions; leave the option out")
+        }
         DragError::NoVolume { .. } => failure.hint("the body must be a closed surface with its normals outwards"),
         DragError::Solve { source: SolveError::TooLarge { .. }, .. } => {
             failure.hint("ask for less with --accuracy or --elements, or allow more with --memory")

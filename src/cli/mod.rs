@@ -3,7 +3,9 @@
 //! Everything that touches the world outside the library stands here: arguments, files, the terminal, the clock's
 //! patience, memory and threads, exit codes.
 
+mod again;
 mod arguments;
+mod asked;
 mod bug;
 mod case;
 mod drag;
@@ -15,6 +17,8 @@ mod options;
 mod output;
 mod progress;
 mod regime;
+mod schema;
+mod shell_word;
 mod surface;
 
 pub use arguments::Arguments;

@@ -5,15 +5,26 @@ use std::io::{self, IsTerminal, Write};
 use std::path::{Path, PathBuf};
 
 use serde::Serialize;
+use slowmote::question::{RECORD_SCHEMA, Record, RecordedFile};
 use slowmote::show::{Style, to_json};
 
 use super::Failure;
-use super::options::OutputOptions;
+use super::arguments::as_value;
+use super::asked::Asked;
+use super::options::{OutputOptions, RecordOptions};
 
 /// Outputs of one run, opened before the work begins.
 pub struct Output {
     quiet: bool,
     json: Json,
+    record: Option<Draft>,
+}
+
+/// A record to be written.
+struct Draft {
+    file: NewFile,
+    /// The record without its answer.
+    record: Record,
 }
 
 enum Json {
@@ -33,7 +44,44 @@ impl Output {
             Some(path) if path.as_os_str() == OutputOptions::STDOUT => Json::Stdout,
             Some(path) => Json::File(NewFile::create("JSON", path, inputs)?),
         };
-        Ok(Self { quiet: options.quiet, json })
+        Ok(Self { quiet: options.quiet, json, record: None })
+    }
+
+    /// Opens a record too, if one is wanted, of what was `asked` and the `files` it was read from.
+    ///
+    /// # Errors
+    /// The record can't be written, or is one of the files.
+    pub fn recording(mut self, options: &RecordOptions, asked: Asked, files: &[PathBuf]) -> Result<Self, Failure> {
+        let Some(path) = &options.record else { return Ok(self) };
+        let inputs = files.iter().map(PathBuf::as_path).collect::<Vec<_>>();
+        let file = NewFile::create("record", path, &inputs)?;
+        let folder = match path.parent() {
+            Some(folder) if folder != Path::new("") => folder,
+            _ => Path::new("."),
+        };
+        let seen = |path: &Path| fs::canonicalize(path).map_err(|error| unreadable(path, &error));
+        let folder = seen(folder)?;
+        let mut subject = asked.subject;
+        let mut recorded = Vec::new();
+        for from in files {
+            let whole = seen(from)?;
+            let near = pathdiff::diff_paths(&whole, &folder).unwrap_or(whole).to_string_lossy().into_owned();
+            if subject.as_ref().is_some_and(|subject| Path::new(subject) == from) {
+                subject = Some(near.clone());
+            }
+            recorded.push(RecordedFile::of(from, near).map_err(|error| unreadable(from, &error))?);
+        }
+        let record = Record {
+            schema: RECORD_SCHEMA.to_owned(),
+            version: env!("CARGO_PKG_VERSION").to_owned(),
+            command: asked.command,
+            subject,
+            options: asked.options,
+            files: recorded,
+            answer: serde_json::Value::Null,
+        };
+        self.record = Some(Draft { file, record });
+        Ok(self)
     }
 
     /// Writes the answer: JSON where it was asked for, text on stdout unless that is JSON's or quiet was asked for.
@@ -42,6 +90,12 @@ impl Output {
     /// A file or stdout can't be written; a reader of stdout that went away is none.
     pub fn write<T: Serialize>(self, answer: &T, text: impl FnOnce(Style) -> String) -> Result<(), Failure> {
         let json = || to_json(answer).map_err(|error| Failure::of(&error).during("the answer can't be put into JSON"));
+        if let Some(Draft { file, mut record }) = self.record {
+            record.answer = as_value(answer)?;
+            let text =
+                to_json(&record).map_err(|error| Failure::of(&error).during("the record can't be put into JSON"))?;
+            file.finish(text.as_bytes())?;
+        }
         let wants_text = !self.quiet;
         match self.json {
             Json::Stdout => return to_stdout(&json()?),
@@ -50,6 +104,10 @@ impl Output {
         }
         if wants_text { to_stdout(&text(stdout_style())) } else { Ok(()) }
     }
+}
+
+fn unreadable(path: &Path, error: &io::Error) -> Failure {
+    Failure::of(error).during(format!("{} can't be read", path.display()))
 }
 
 /// Writes to stdout; a closed pipe is no error.

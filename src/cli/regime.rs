@@ -1,6 +1,6 @@
 //! `slowmote regime [BODY]`.
 
-use std::path::Path;
+use std::path::PathBuf;
 
 use clap::Args;
 use slowmote::physical::quantity::{
@@ -8,14 +8,16 @@ use slowmote::physical::quantity::{
     parse_pressure, parse_speed, parse_surface_tension, parse_temperature_difference,
 };
 use slowmote::physical::{Dimension, Material, Quantity, QuantityError};
-use slowmote::question::{Given, Input, LengthUnit, RegimeBody, RegimeQuestion, Verdict};
+use slowmote::question::{Given, Input, LengthUnit, RegimeAnswer, RegimeBody, RegimeQuestion, StandingBody, Verdict};
 use slowmote::show::{Assumed, regime_text};
 use slowmote::surface::Shape;
 
-use super::case::{Filled, filled};
+use super::asked::Asked;
+use super::case::filled;
+use super::drag::settle;
 use super::options::{
-    BodyOptions, ChannelOption, FlowOption, FluidOptions, OutputOptions, centrifuge, channel, flow, length_unit,
-    parse_with,
+    BodyOptions, ChannelOption, FlowOption, FluidOptions, OutputOptions, PiecesName, RecordOptions, centrifuge,
+    channel, flow, length_unit, parse_with,
 };
 use super::output::Output;
 use super::{Exit, Failure};
@@ -116,6 +118,8 @@ pub struct RegimeArguments {
 
     #[command(flatten)]
     output: OutputOptions,
+    #[command(flatten)]
+    record: RecordOptions,
 
     /// Exit with code 4 if something is outside creeping flow
     #[arg(long, help_heading = "Output")]
@@ -128,6 +132,8 @@ struct Known {
     fluid: FluidOptions,
     /// Of the body, as a case file has it.
     density: Option<String>,
+    /// The files that were read.
+    files: Vec<PathBuf>,
 }
 
 const BODY: &str = "The body";
@@ -139,9 +145,33 @@ impl RegimeArguments {
     ///
     /// # Errors
     /// Input that can't be used or does not fit together, or an output that can't be written.
-    pub fn run(&self) -> Result<Exit, Failure> {
-        let material = self.material.as_deref().map(known_material).transpose()?;
+    pub fn run(&self, mut asked: Asked) -> Result<Exit, Failure> {
         let known = self.known()?;
+        let assumed = Assumed {
+            fluid: known.fluid.fluid.is_none(),
+            temperature: known.fluid.temperature.is_none(),
+            ..Assumed::default()
+        };
+        settle(&mut asked, &assumed);
+        let files = known.files.clone();
+        let answer = self.ask(known)?;
+        let inputs = files.iter().map(PathBuf::as_path).collect::<Vec<_>>();
+        let output = Output::open(&self.output, &inputs)?.recording(&self.record, asked, &files)?;
+        output.write(&answer, |style| regime_text(&answer, &assumed, style))?;
+        let outside = answer.validity.verdict == Some(Verdict::Outside);
+        Ok(if self.strict && outside { Exit::OutsideCreepingFlow } else { Exit::Done })
+    }
+
+    /// The answer alone.
+    ///
+    /// # Errors
+    /// As [`RegimeArguments::run`].
+    pub fn answer(&self) -> Result<RegimeAnswer, Failure> {
+        self.ask(self.known()?)
+    }
+
+    fn ask(&self, known: Known) -> Result<RegimeAnswer, Failure> {
+        let material = self.material.as_deref().map(known_material).transpose()?;
         let density = match (self.body_density.or(material.map(Material::density)), &known.density) {
             (None, Some(text)) => Some(positive(parse_density)(text).map_err(|error| {
                 Failure::new("the density in the case file can't be used")
@@ -159,36 +189,36 @@ impl RegimeArguments {
             centrifuge: self.centrifuge.is_some(),
             given: self.given(density),
         };
-        let answer = question.answer().map_err(|error| Failure::of(&error).hint(error.hint()))?;
-        let inputs: Vec<&Path> = self.body.iter().map(Path::new).collect();
-        let output = Output::open(&self.output, &inputs)?;
-        let assumed = Assumed {
-            fluid: known.fluid.fluid.is_none(),
-            temperature: known.fluid.temperature.is_none(),
-            ..Assumed::default()
-        };
-        output.write(&answer, |style| regime_text(&answer, &assumed, style))?;
-        let outside = answer.validity.verdict == Some(Verdict::Outside);
-        Ok(if self.strict && outside { Exit::OutsideCreepingFlow } else { Exit::Done })
+        question.answer().map_err(|error| Failure::of(&error).hint(error.hint()))
     }
 
     /// The body, if there is one, and the fluid; a case file stands in for options that were not given.
     fn known(&self) -> Result<Known, Failure> {
-        let fluid = self.fluid.clone();
+        let mut known = Known { body: None, fluid: self.fluid.clone(), density: None, files: Vec::new() };
         if let Some(size) = self.size {
-            return Ok(Known { body: Some(RegimeBody::of_span(size)), fluid, density: None });
+            known.body = Some(RegimeBody::of_span(size));
+            return Ok(known);
         }
-        let Some(text) = &self.body else { return Ok(Known { body: None, fluid, density: None }) };
+        let Some(text) = &self.body else { return Ok(known) };
         let (body, unit) = (text.clone(), self.unit.clone());
-        let options = BodyOptions { body, unit, turn: Vec::new(), at: None, reference: None };
-        let Filled { body: options, fluid, name, density } = filled(&options, &fluid)?;
-        let mut body = options.body(None)?;
-        body.name = name.unwrap_or(body.name);
+        // Of the size alone nothing changes with what the pieces are.
+        let pieces = Some(PiecesName::Joined);
+        let options = BodyOptions { body, unit, pieces, turn: Vec::new(), at: None, reference: None };
+        let filled = filled(&options, &self.fluid)?;
+        let mut bodies = filled.standing(None)?;
+        let Some(StandingBody { body, .. }) = bodies.pop().filter(|_| bodies.is_empty()) else {
+            return Err(Failure::new(format!("{text} holds {} bodies, and one is expected", bodies.len() + 1))
+                .hint("ask for one after the other"));
+        };
         let bounds = RegimeBody::of(&body).ok_or_else(|| {
             Failure::new(format!("the surface of {} encloses no volume", body.name))
                 .hint("the body must be a closed surface with its normals outwards")
         })?;
-        Ok(Known { body: Some(bounds), fluid, density })
+        known.body = Some(bounds);
+        known.density = filled.said_of_one().density;
+        known.files = filled.files();
+        known.fluid = filled.fluid;
+        Ok(known)
     }
 
     fn given(&self, density: Option<Quantity>) -> Given {

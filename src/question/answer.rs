@@ -4,6 +4,7 @@
 //! rows of numbers in the laboratory frame x, y, z; force before torque, velocity before rotation; forces and torques
 //! of the resistance are those that the body exerts on the fluid, torques about `reference_point_m`.
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::budget::{TORQUE_POWER, force_total, torque_total};
@@ -15,39 +16,40 @@ pub type Vector = [f64; 3];
 pub type Tensor = [[f64; 3]; 3];
 
 /// What `drag` answers.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct DragAnswer {
     /// Name and version of this layout: `slowmote.drag.1`.
     pub schema: String,
-    /// The body.
-    pub body: BodyAnswer,
+    /// The body; null if there are several.
+    pub body: Option<BodyAnswer>,
     /// The bodies, when there are several; null for one.
     pub bodies: Option<Vec<BodyAnswer>>,
     /// The fluid.
     pub fluid: FluidAnswer,
     /// The walls around it; null in open fluid.
     pub surroundings: Option<Vec<String>>,
-    /// The point about which torques are taken and whose velocity is meant, m.
-    pub reference_point_m: Vector,
-    /// Resistance about the reference point.
-    pub resistance: ResistanceBlocks,
-    /// Mobility about the reference point.
-    pub mobility: MobilityBlocks,
-    /// Resistance of several bodies together, six rows a body; null for one.
+    /// The point about which torques are taken and whose velocity is meant, m; null if there are several bodies.
+    pub reference_point_m: Option<Vector>,
+    /// Resistance about the reference point; null if there are several bodies.
+    pub resistance: Option<ResistanceBlocks>,
+    /// Mobility about the reference point; null if there are several bodies.
+    pub mobility: Option<MobilityBlocks>,
+    /// Resistance of several bodies together, SI: six rows and columns a body, force before torque and velocity before
+    /// rotation, each about that body's own centroid; null for one.
     pub grand_resistance: Option<Vec<Vec<f64>>>,
-    /// Mobility of several bodies together; null for one.
+    /// Mobility of several bodies together, its inverse; null for one.
     pub grand_mobility: Option<Vec<Vec<f64>>>,
-    /// The point about which the coupling of the resistance is symmetric, m.
-    pub centre_of_resistance_m: Vector,
-    /// The point about which the coupling of the mobility is symmetric, m.
-    pub centre_of_mobility_m: Vector,
-    /// Radius of the sphere of equal mobility in the mean over all orientations, m; null near walls.
+    /// The point about which the coupling of the resistance is symmetric, m; null if there are several bodies.
+    pub centre_of_resistance_m: Option<Vector>,
+    /// The point about which the coupling of the mobility is symmetric, m; null if there are several bodies.
+    pub centre_of_mobility_m: Option<Vector>,
+    /// Radius of the sphere of equal mobility in the mean over all orientations, m; null near walls and for several bodies.
     pub hydrodynamic_radius_m: Option<f64>,
-    /// Mean and principal drags.
-    pub principal: PrincipalDrag,
-    /// Brownian motion about the centre of mobility.
-    pub diffusion: Diffusion,
+    /// Mean and principal drags; null if there are several bodies.
+    pub principal: Option<PrincipalDrag>,
+    /// Brownian motion about the centre of mobility; null if there are several bodies.
+    pub diffusion: Option<Diffusion>,
     /// How far the numbers can be trusted.
     pub relative_error: RelativeErrorAnswer,
     /// Force and torque of the motion that was asked for; null if none was.
@@ -62,8 +64,45 @@ pub struct DragAnswer {
     pub solver: SolverAnswer,
 }
 
+/// What an answer about one body holds beside what every answer does.
+#[derive(Debug, Clone, Copy)]
+pub struct OneBody<'a> {
+    /// See [`DragAnswer::body`].
+    pub body: &'a BodyAnswer,
+    /// See [`DragAnswer::reference_point_m`].
+    pub reference_point_m: Vector,
+    /// See [`DragAnswer::resistance`].
+    pub resistance: &'a ResistanceBlocks,
+    /// See [`DragAnswer::mobility`].
+    pub mobility: &'a MobilityBlocks,
+    /// See [`DragAnswer::centre_of_resistance_m`].
+    pub centre_of_resistance_m: Vector,
+    /// See [`DragAnswer::centre_of_mobility_m`].
+    pub centre_of_mobility_m: Vector,
+    /// See [`DragAnswer::principal`].
+    pub principal: &'a PrincipalDrag,
+    /// See [`DragAnswer::diffusion`].
+    pub diffusion: &'a Diffusion,
+}
+
+impl DragAnswer {
+    /// The tensors of one body; none if there are several.
+    pub fn one(&self) -> Option<OneBody<'_>> {
+        Some(OneBody {
+            body: self.body.as_ref()?,
+            reference_point_m: self.reference_point_m?,
+            resistance: self.resistance.as_ref()?,
+            mobility: self.mobility.as_ref()?,
+            centre_of_resistance_m: self.centre_of_resistance_m?,
+            centre_of_mobility_m: self.centre_of_mobility_m?,
+            principal: self.principal.as_ref()?,
+            diffusion: self.diffusion.as_ref()?,
+        })
+    }
+}
+
 /// The body as it was understood.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct BodyAnswer {
     /// What it was called: a shape as it was written, or a file's name.
@@ -83,7 +122,7 @@ pub struct BodyAnswer {
 }
 
 /// The fluid as it was understood.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FluidAnswer {
     /// Its name.
@@ -101,7 +140,7 @@ pub struct FluidAnswer {
 }
 
 /// `[F; T] = R [U; Omega]`, F and T by the body on the fluid.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct ResistanceBlocks {
     /// Force for velocity, N.s/m.
@@ -115,7 +154,7 @@ pub struct ResistanceBlocks {
 }
 
 /// `[U; Omega] = M [F; T]`, the inverse of the resistance.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MobilityBlocks {
     /// Velocity for force, m/(N.s).
@@ -129,7 +168,7 @@ pub struct MobilityBlocks {
 }
 
 /// The drag without its axes: what the body feels on average, at least and at most.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct PrincipalDrag {
     /// Mean over orientations; null near walls.
@@ -145,7 +184,7 @@ pub struct PrincipalDrag {
 }
 
 /// The mean over orientations, from the mobility about its centre.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MeanDrag {
     /// Drag of a freely tumbling body, `6 pi mu R_h`, N.s/m.
@@ -155,7 +194,7 @@ pub struct MeanDrag {
 }
 
 /// Brownian motion about the centre of mobility, `k_B T M`.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Diffusion {
     /// Translation, m2/s.
@@ -168,7 +207,7 @@ pub struct Diffusion {
 ///
 /// `total` is the sum of the solver's worst, of `geometry` and of `inputs`. The sum, and no root of squares: the
 /// solver's error and the geometry's are systematic and mostly of one sign.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RelativeErrorAnswer {
     /// Solver, force-velocity block; null if there is no estimate.
@@ -210,7 +249,7 @@ impl RelativeErrorAnswer {
 }
 
 /// What one uncertain input does to the answer, to first order.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct InputShare {
     /// Which input.
@@ -224,7 +263,7 @@ pub struct InputShare {
 }
 
 /// The motion that was asked for, and what the **fluid exerts on the body**.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct MotionAnswer {
     /// Velocity of the reference point, m/s.
@@ -244,7 +283,7 @@ pub struct MotionAnswer {
 }
 
 /// The body in a background flow.
-#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FlowAnswer {
     /// Force of the fluid on the held body, N.
@@ -260,7 +299,7 @@ pub struct FlowAnswer {
 }
 
 /// How well creeping flow holds, from best to worst.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, PartialOrd, Ord, Hash, Serialize, Deserialize, JsonSchema)]
 #[serde(rename_all = "lowercase")]
 pub enum Verdict {
     /// What is left out does not matter.
@@ -286,7 +325,7 @@ impl Verdict {
 }
 
 /// The verdict on the regime.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Validity {
     /// The worst verdict of the numbers that apply; null if none does, because no motion was given.
@@ -306,7 +345,7 @@ pub struct Validity {
 }
 
 /// One dimensionless number and what it says.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct NumberVerdict {
     /// Its name.
@@ -322,7 +361,7 @@ pub struct NumberVerdict {
 }
 
 /// How the answer was found.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct SolverAnswer {
     /// Version of this program.
@@ -331,6 +370,8 @@ pub struct SolverAnswer {
     pub triangles: usize,
     /// Unknowns, three a node.
     pub unknowns: usize,
+    /// A fingerprint of the mesh: equal meshes have equal ones.
+    pub mesh: String,
     /// What solved the system.
     pub method: String,
     /// Estimated condition number of the system.

@@ -42,6 +42,15 @@ impl Body {
         }
     }
 
+    /// Relative uncertainty of its size: the worst of its lengths.
+    pub fn size_uncertainty(&self) -> f64 {
+        let of_size = |input: &InputUncertainty| match input {
+            InputUncertainty::Size { relative, .. } => *relative,
+            InputUncertainty::Viscosity { .. } => 0.0,
+        };
+        self.uncertainties.iter().map(of_size).fold(0.0, f64::max)
+    }
+
     /// Volume, area and centroid of the true surface, and its box.
     pub fn extent(&self) -> Extent {
         let cuts = self.blueprint.cuts_for(MEASURING_PANELS);
@@ -84,13 +93,19 @@ impl Extent {
 
     /// Edges of the box around it.
     pub fn size(&self) -> Point {
+        let (low, high) = self.bounds();
+        high - low
+    }
+
+    /// The box around it: two opposite corners.
+    pub fn bounds(&self) -> (Point, Point) {
         let mut low = Point::repeat(f64::INFINITY);
         let mut high = Point::repeat(f64::NEG_INFINITY);
         for point in &self.points {
             low = low.inf(point);
             high = high.sup(point);
         }
-        high - low
+        (low, high)
     }
 
     /// The same after turning, scaling and moving.

@@ -9,8 +9,8 @@ use super::budget::InputUncertainty;
 use crate::physical::quantity::{DisplayUnit, format_number, format_si};
 use crate::surface::shapes::{CATALOGUE, ShapeSpec};
 use crate::surface::{
-    FacetedGeometry, FacetedOptions, FileError, Geometry, Placement, Point, RawSurface, ShapeError, SurfaceError,
-    SurfaceFormat, examine, faceted, read_surface, weld, weld_tolerance,
+    Examination, FacetedGeometry, FacetedOptions, FileError, Geometry, Placement, Point, RawSurface, ShapeError,
+    SurfaceError, SurfaceFormat, TriangleMesh, examine, faceted, read_surface, usable, weld, weld_tolerance,
 };
 
 /// Extension of case files.
@@ -32,6 +32,18 @@ pub struct LengthUnit {
     pub symbol: String,
     /// Its size, m.
     pub metres: f64,
+}
+
+/// What the separate pieces of a surface file are.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Default)]
+pub enum Pieces {
+    /// Not told: a file of several is refused.
+    #[default]
+    Untold,
+    /// One rigid body.
+    Joined,
+    /// Bodies that move on their own.
+    Apart,
 }
 
 /// Why there is no body.
@@ -80,6 +92,14 @@ pub enum BodyError {
         /// The unit.
         unit: String,
     },
+    /// A file of several pieces was given without saying what they are.
+    #[error("{} holds {count} separate pieces, and it is not told what they are", .path.display())]
+    SeveralPieces {
+        /// The file.
+        path: PathBuf,
+        /// How many there are.
+        count: usize,
+    },
     /// The surface can't be used.
     #[error("the surface in {} can't be used", .path.display())]
     Surface {
@@ -104,34 +124,50 @@ impl BodyError {
             Self::Device { .. } | Self::CaseFile { .. } => {
                 vec!["give one body: a shape such as `sphere:10um`, or a surface file".to_owned()]
             }
+            Self::SeveralPieces { .. } => vec![
+                "say `--pieces joined` for one rigid body, or `--pieces apart` for bodies that move on their own"
+                    .to_owned(),
+            ],
             Self::NoUnit { longest, .. } => vec![unit_hint(*longest)],
             Self::NeedlessUnit { .. } => vec!["leave `--unit` out; it is for surface files".to_owned()],
-            Self::Surface { source, .. } => vec![source.hint().to_owned()],
+            Self::Surface { source, path } => vec![
+                source.hint().to_owned(),
+                format!(
+                    "`slowmote surface {}` tells all that is wrong with it, and whether mending helps",
+                    path.display()
+                ),
+            ],
         }
     }
 }
 
 impl Body {
-    /// Makes the body that a text names: a shape such as `rod:12x2um`, or a surface file, whose unit must be told.
+    /// The body that a text stands for: a shape as in `rod:12x2um`, or a surface file, whose unit must be told and whose
+    /// pieces, if there are several, are what `pieces` says. More than one body only for [`Pieces::Apart`].
     ///
     /// `geometry` is that of the panels; left out, a shape is exact and a file gets what fits its facets. For a file,
     /// [`Geometry::Exact`] takes the facets for the surface.
     ///
     /// # Errors
     /// [`BodyError`]: no such shape or file, no unit, or a surface that can't be used.
-    pub fn read(text: &str, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> Result<Self, BodyError> {
+    pub fn read(
+        text: &str,
+        unit: Option<&LengthUnit>,
+        geometry: Option<Geometry>,
+        pieces: Pieces,
+    ) -> Result<Vec<Self>, BodyError> {
         let path = Path::new(text);
         if names_a_shape(text) {
-            return shape(text, unit, geometry);
+            return shape(text, unit, geometry).map(|body| vec![body]);
         }
         if path.extension().is_some_and(|extension| extension.eq_ignore_ascii_case(CASE_EXTENSION)) {
             return Err(BodyError::CaseFile { path: path.to_path_buf() });
         }
         if looks_like_a_file(text) || path.exists() {
-            return file(path, unit, geometry);
+            return file(path, unit, geometry, pieces);
         }
         match ShapeSpec::parse(text) {
-            Ok(_) => shape(text, unit, geometry),
+            Ok(_) => shape(text, unit, geometry).map(|body| vec![body]),
             Err(source) => Err(BodyError::Neither { text: text.to_owned(), source }),
         }
     }
@@ -166,11 +202,16 @@ fn shape(text: &str, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> R
     })
 }
 
-fn file(path: &Path, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> Result<Body, BodyError> {
+fn file(
+    path: &Path,
+    unit: Option<&LengthUnit>,
+    geometry: Option<Geometry>,
+    pieces: Pieces,
+) -> Result<Vec<Body>, BodyError> {
     if is_device(path) {
         return Err(BodyError::Device { path: path.to_path_buf() });
     }
-    let RawSurface { mesh, mut notes, .. } = read_surface(path).map_err(BodyError::File)?;
+    let RawSurface { mesh, notes, .. } = read_surface(path).map_err(BodyError::File)?;
     let path_buf = || path.to_path_buf();
     let Some(unit) = unit else {
         let (low, high) = mesh.bounding_box();
@@ -178,23 +219,58 @@ fn file(path: &Path, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> R
     };
     // Every corner of an STL facet is a vertex of its own.
     let mesh = weld(&mesh, weld_tolerance(&mesh)).mesh;
+    let seen = examine(&mesh);
+    // What is wrong with the whole, such as pieces that cross, is told before what the pieces are.
+    let surface_error = |source| BodyError::Surface { path: path_buf(), source };
+    usable(&mesh, &seen).map_err(surface_error)?;
+    let name = path.file_name().unwrap_or(path.as_os_str()).to_string_lossy().into_owned();
+    let count = seen.shells.len();
+    let read = |mesh: &TriangleMesh, seen: &Examination, name: String| {
+        let (mut body, more) = faceted_body(mesh, seen, unit, geometry).map_err(surface_error)?;
+        body.name = name;
+        body.notes = notes.iter().cloned().chain(more).collect();
+        Ok(body)
+    };
+    match pieces {
+        Pieces::Untold if count > 1 => Err(BodyError::SeveralPieces { path: path_buf(), count }),
+        Pieces::Apart if count > 1 => {
+            let piece = |shell: usize| {
+                let piece = mesh.filtered(|facet| seen.shell_of_facet[facet] == shell);
+                read(&piece, &examine(&piece), format!("{name}, piece {}", shell + 1))
+            };
+            (0..count).map(piece).collect()
+        }
+        _ => {
+            let mut body = read(&mesh, &seen, name)?;
+            if count > 1 {
+                body.notes.push(format!("its {count} pieces are one rigid body"));
+            }
+            Ok(vec![body])
+        }
+    }
+}
+
+/// The body of a welded mesh without a name, and what there is to know about how its facets were read.
+fn faceted_body(
+    mesh: &TriangleMesh,
+    seen: &Examination,
+    unit: &LengthUnit,
+    geometry: Option<Geometry>,
+) -> Result<(Body, Vec<String>), SurfaceError> {
     let wanted = geometry.map(|geometry| match geometry {
         Geometry::Curved => FacetedGeometry::Curved,
         Geometry::Exact | Geometry::Flat => FacetedGeometry::Flat,
     });
-    let options = FacetedOptions { geometry: wanted, ..FacetedOptions::default() };
-    let body =
-        faceted(&mesh, &examine(&mesh), &options).map_err(|source| BodyError::Surface { path: path_buf(), source })?;
-    notes.push(body.geometry.reason);
-    notes.extend(body.notes);
-    let name = path.file_name().unwrap_or(path.as_os_str()).to_string_lossy().into_owned();
-    Ok(Body {
+    let body = faceted(mesh, seen, &FacetedOptions { geometry: wanted, ..FacetedOptions::default() })?;
+    let notes = std::iter::once(body.geometry.reason).chain(body.notes).collect();
+    let in_metres = Placement { scale: unit.metres, ..Placement::identity() };
+    let body = Body {
         facets: Some(mesh.facets().len()),
         geometry: body.panel_geometry,
         geometry_error: body.relative_geometry_error,
-        notes,
-        ..Body::exact(name, body.blueprint.placed(&Placement { scale: unit.metres, ..Placement::identity() }))
-    })
+        ..Body::exact(String::new(), body.blueprint.placed(&in_metres))
+    };
+    Ok((body, notes))
 }
 
 #[cfg(unix)]

@@ -16,14 +16,18 @@ use std::fs::File;
 use std::io::Read;
 use std::path::{Path, PathBuf};
 
+use schemars::JsonSchema;
 use serde::Deserialize;
 use thiserror::Error;
+
+/// Name and version of the layout of [`Case`].
+pub const CASE_SCHEMA: &str = "slowmote.case.1";
 
 /// A case longer than this is not one; the file is not read beyond.
 const LONGEST: u64 = 1 << 20;
 
 /// What a case file says.
-#[derive(Debug, Clone, PartialEq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Case {
     /// The fluid.
@@ -38,7 +42,7 @@ pub struct Case {
 }
 
 /// A fluid by name, or by viscosity and density.
-#[derive(Debug, Clone, PartialEq, Eq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Eq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct CaseFluid {
     /// A name that `slowmote fluid` knows.
@@ -52,7 +56,7 @@ pub struct CaseFluid {
 }
 
 /// One body.
-#[derive(Debug, Clone, PartialEq, Eq, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Eq, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct CaseBody {
     /// What it is called in the answer.
@@ -61,6 +65,8 @@ pub struct CaseBody {
     pub surface: String,
     /// Unit of a surface file.
     pub unit: Option<String>,
+    /// What the pieces of a surface file are: `joined` or `apart`.
+    pub pieces: Option<String>,
     /// Place of its centroid: three lengths.
     pub at: Option<[String; 3]>,
     /// Turns, as in `30deg@y`.

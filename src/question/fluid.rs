@@ -1,5 +1,6 @@
 //! A fluid at a temperature, on its own: the answer to `fluid NAME`.
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::answer::FluidAnswer;
@@ -10,10 +11,10 @@ use crate::physical::fluids::CatalogueEntry;
 pub const FLUID_SCHEMA: &str = "slowmote.fluid.1";
 
 /// Name and version of the layout of [`FluidCatalogue`].
-const CATALOGUE_SCHEMA: &str = "slowmote.fluids.1";
+pub(super) const CATALOGUE_SCHEMA: &str = "slowmote.fluids.1";
 
 /// Properties of a fluid at one temperature, and how well they are known.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FluidReport {
     /// Name and version of this layout: `slowmote.fluid.1`.
@@ -49,7 +50,7 @@ pub struct FluidReport {
 }
 
 /// The fluids known by name: the answer to `fluid` alone.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct FluidCatalogue {
     /// Name and version of this layout: `slowmote.fluids.1`.
@@ -59,7 +60,7 @@ pub struct FluidCatalogue {
 }
 
 /// A fluid known by name.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct CataloguedFluid {
     /// Its name.

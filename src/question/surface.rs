@@ -2,20 +2,20 @@
 
 use std::path::Path;
 
-use serde::{Deserialize, Serialize};
-
+use super::surface_flaws::{creases, flaws, holes, shells, wrong_facing};
+use super::surface_report::{SURFACE_SCHEMA, SolvedAs, SurfaceReport, WrittenReport};
 use super::{BodyError, LengthUnit, Vector};
+use crate::physical::quantity::format_number;
 use crate::surface::shapes::ShapeSpec;
 use crate::surface::{
-    CharacterKind, Examination, FacetedGeometry, FacetedOptions, Geometry, MendOptions, Orientation, Point, RawSurface,
-    TriangleMesh, examine, faceted, mend, read_surface, usable, weld, weld_tolerance,
+    CharacterKind, FacetedGeometry, FacetedOptions, Geometry, MendOptions, Orientation, Point, RawSurface,
+    SMOOTH_SURFACE_CREASE_DEG, ShapeError, SurfaceError, SurfaceFormat, TriangleMesh, WriteError, examine, faceted,
+    mend, read_surface, read_surface_bytes, surface_bytes, usable, weld, weld_tolerance,
 };
 
-/// Name and version of the answer's layout.
-pub const SURFACE_SCHEMA: &str = "slowmote.surface.1";
-
-/// Lists in the answer end here; their counts are given whole.
-const MOST_LISTED: usize = 20;
+/// A surface that was written must keep its area to this part. Single precision keeps it to 1e-6 or so; what a body far
+/// from its origin loses beyond this is no longer small beside the accuracy of an answer.
+const LARGEST_AREA_CHANGE: f64 = 1e-4;
 
 /// A surface to look at.
 #[derive(Debug, Clone, PartialEq)]
@@ -28,83 +28,32 @@ pub struct Surface {
     pub mesh: TriangleMesh,
     /// The unit of its coordinates, if told.
     pub unit: Option<LengthUnit>,
+    /// What was mended, a sentence each; none if nobody mended it.
+    pub mended: Option<Vec<String>>,
     /// What there is to know about how it was read.
     pub notes: Vec<String>,
 }
 
-/// What there is to say of a surface. Lengths are in file units; where the unit is known, the size stands in SI too.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
-#[serde(deny_unknown_fields)]
-#[allow(missing_docs, reason = "the keys say what they are")]
-pub struct SurfaceReport {
-    pub schema: String,
-    pub name: String,
-    pub format: Option<String>,
-    pub metres_per_file_unit: Option<f64>,
-    pub unit: Option<String>,
-    pub vertices: usize,
-    pub facets: usize,
-    pub size_in_file_units: Vector,
-    pub centroid_in_file_units: Vector,
-    pub volume_in_file_units: f64,
-    pub area_in_file_units: f64,
-    pub shortest_edge_in_file_units: f64,
-    pub longest_edge_in_file_units: f64,
-    pub size_m: Option<Vector>,
-    pub centroid_m: Option<Vector>,
-    pub volume_m3: Option<f64>,
-    pub area_m2: Option<f64>,
-    pub closed: bool,
-    pub orientation: String,
-    pub shells: Vec<ShellReport>,
-    pub genus: Option<usize>,
-    pub hole_count: usize,
-    pub holes: Vec<HoleReport>,
-    pub non_manifold_edges: usize,
-    pub pinched_vertices: usize,
-    pub duplicate_facets: usize,
-    pub degenerate_facets: usize,
-    pub slivers: usize,
-    pub intersections: usize,
-    pub intersections_complete: bool,
-    pub intersection_places_in_file_units: Vec<Vector>,
-    pub crease_count: usize,
-    pub crease_length_in_file_units: f64,
-    pub sharpest_turn_deg: f64,
-    pub kind: String,
-    pub kind_reason: String,
-    pub geometry: Option<String>,
-    pub geometry_reason: Option<String>,
-    pub relative_geometry_error: Option<f64>,
-    pub macro_triangles: Option<usize>,
-    pub mended: Vec<String>,
-    pub usable: bool,
-    pub refusal: Option<String>,
-    pub next_step: Option<String>,
-    pub notes: Vec<String>,
+/// A length or a place in file units, and in SI where the unit is known.
+#[derive(Debug, Clone, Copy)]
+pub(super) struct Scale {
+    metres: Option<f64>,
 }
 
-/// One piece of a surface, in file units.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
-#[serde(deny_unknown_fields)]
-#[allow(missing_docs, reason = "the keys say what they are")]
-pub struct ShellReport {
-    pub facets: usize,
-    pub closed: bool,
-    pub volume_in_file_units: f64,
-    pub area_in_file_units: f64,
-    pub genus: Option<usize>,
-    pub inside_shell: Option<usize>,
+impl Scale {
+    /// A length, an area or a volume by its power of length.
+    pub fn si(self, value: f64, power: i32) -> Option<f64> {
+        self.metres.map(|unit| value * unit.powi(power))
+    }
+
+    /// A place or a size.
+    pub fn vector_m(self, x: Point) -> Option<Vector> {
+        self.metres.map(|unit| vector(x * unit))
+    }
 }
 
-/// A hole, in file units.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
-#[serde(deny_unknown_fields)]
-#[allow(missing_docs, reason = "the keys say what they are")]
-pub struct HoleReport {
-    pub edges: usize,
-    pub length_in_file_units: f64,
-    pub place_in_file_units: Vector,
+pub(super) fn vector(x: Point) -> Vector {
+    [x.x, x.y, x.z]
 }
 
 impl Surface {
@@ -113,104 +62,192 @@ impl Surface {
     /// # Errors
     /// [`BodyError`]: no such shape or file, or one that can't be read.
     pub fn read(text: &str, unit: Option<&LengthUnit>, elements: usize) -> Result<Self, BodyError> {
-        if let Ok(spec) = ShapeSpec::parse(text) {
+        let path = Path::new(text);
+        let shape = ShapeSpec::parse(text);
+        if let Ok(spec) = shape {
             let unit = unit.cloned().unwrap_or(LengthUnit { symbol: "um".to_owned(), metres: 1e-6 });
-            let blueprint = spec.shape.blueprint();
+            let blueprint = spec.shape.blueprint().ungraded();
             let panels = blueprint.subdivide(blueprint.cuts_for(elements), Geometry::Flat);
             let mesh = TriangleMesh::of_panels(&panels, 1.0 / unit.metres);
-            return Ok(Self { name: spec.shape.name(), format: None, mesh, unit: Some(unit), notes: Vec::new() });
+            let name = spec.shape.name();
+            return Ok(Self { name, format: None, mesh, unit: Some(unit), mended: None, notes: Vec::new() });
         }
-        let path = Path::new(text);
+        if is_endless(path) {
+            return Err(BodyError::Device { path: path.to_path_buf() });
+        }
+        if let (Err(source), false, None) = (shape, path.exists(), SurfaceFormat::of_path(path)) {
+            return Err(match source {
+                ShapeError::UnknownShape { .. } => BodyError::Neither { text: text.to_owned(), source },
+                source => BodyError::Shape(source),
+            });
+        }
         let RawSurface { mesh, format, variant, notes, .. } = read_surface(path).map_err(BodyError::File)?;
         let mesh = weld(&mesh, weld_tolerance(&mesh)).mesh;
         let name = path.file_name().unwrap_or(path.as_os_str()).to_string_lossy().into_owned();
-        Ok(Self { name, format: Some(format!("{format}, {variant}")), mesh, unit: unit.cloned(), notes })
+        let format = Some(format!("{format}, {variant}"));
+        Ok(Self { name, format, mesh, unit: unit.cloned(), mended: None, notes })
     }
 
-    /// Closes small holes, turns facets outward, drops what is plainly wrong; gives a sentence for each thing done.
-    pub fn mended(&self) -> (Self, Vec<String>) {
+    /// Closes small holes, turns facets outward, drops what is plainly wrong, and lists each thing done.
+    pub fn mended(&self) -> Self {
         let (mesh, done) = mend(&self.mesh, &MendOptions::default());
-        (Self { mesh, ..self.clone() }, done.iter().map(ToString::to_string).collect())
+        Self { mesh, mended: Some(done.iter().map(ToString::to_string).collect()), ..self.clone() }
     }
 
-    /// Looks at it; `mended` is what was done to it before.
-    pub fn report(&self, mended: Vec<String>) -> SurfaceReport {
+    /// The bytes of a file in this format, and what the solver says of it when it is read back: the single precision of
+    /// STL may be too low for a body far from its origin. `seen` is the surface's own report; the path is left empty.
+    ///
+    /// # Errors
+    /// [`WriteError`]: the format can't hold the surface.
+    pub fn written(&self, format: SurfaceFormat, seen: &SurfaceReport) -> Result<(Vec<u8>, WrittenReport), WriteError> {
+        let bytes = surface_bytes(&self.mesh, format)?;
+        let refusal = match read_surface_bytes(&bytes, format) {
+            Ok(raw) => {
+                let mesh = weld(&raw.mesh, weld_tolerance(&raw.mesh)).mesh;
+                let found = examine(&mesh);
+                let change = (found.area / seen.area_in_file_units - 1.0).abs();
+                let changed = || {
+                    let percent = format_number(100.0 * change, 2);
+                    (change > LARGEST_AREA_CHANGE).then(|| format!("its area has changed by {percent} %"))
+                };
+                usable(&mesh, &found).err().map(|error| error.to_string()).or_else(changed)
+            }
+            Err(error) => Some(error.to_string()),
+        };
+        let report = WrittenReport {
+            path: String::new(),
+            format: format.to_string(),
+            facets: self.mesh.facets().len(),
+            usable: refusal.is_none(),
+            refusal,
+        };
+        Ok((bytes, report))
+    }
+
+    /// Looks at it. The options say how it would be solved; its crease angle is also that from which edges are counted.
+    pub fn report(&self, options: &FacetedOptions) -> SurfaceReport {
         let seen = examine(&self.mesh);
         let refusal = usable(&self.mesh, &seen).err();
-        let body = match refusal {
-            None => faceted(&self.mesh, &seen, &FacetedOptions::default()).ok(),
+        let solved_as = match refusal {
+            None => faceted(&self.mesh, &seen, options).ok().map(|body| SolvedAs {
+                geometry: match body.geometry.geometry {
+                    FacetedGeometry::Flat => "flat",
+                    FacetedGeometry::Curved => "curved",
+                }
+                .to_owned(),
+                reason: body.geometry.reason,
+                creases_from_deg: body.crease_deg,
+                relative_geometry_error: body.relative_geometry_error,
+                macro_triangles: body.blueprint.triangles.len(),
+            }),
             Some(_) => None,
         };
-        let metres = self.unit.as_ref().map(|unit| unit.metres);
+        let scale = Scale { metres: self.unit.as_ref().map(|unit| unit.metres) };
         let (low, high) = seen.bounding_box;
-        let vector = |x: Point| -> Vector { [x.x, x.y, x.z] };
+        let next = refusal.as_ref().map(|refusal| self.next_step(refusal));
+        let flaws = flaws(&self.mesh, &seen, scale);
         SurfaceReport {
             schema: SURFACE_SCHEMA.to_owned(),
             name: self.name.clone(),
             format: self.format.clone(),
-            metres_per_file_unit: metres,
             unit: self.unit.as_ref().map(|unit| unit.symbol.clone()),
+            metres_per_file_unit: scale.metres,
             vertices: seen.vertices,
             facets: seen.facets,
             size_in_file_units: vector(high - low),
+            size_m: scale.vector_m(high - low),
+            lowest_corner_in_file_units: vector(low),
+            lowest_corner_m: scale.vector_m(low),
             centroid_in_file_units: vector(seen.centroid),
+            centroid_m: scale.vector_m(seen.centroid),
             volume_in_file_units: seen.volume,
+            volume_m3: scale.si(seen.volume, 3),
             area_in_file_units: seen.area,
+            area_m2: scale.si(seen.area, 2),
             shortest_edge_in_file_units: seen.edge_lengths.0,
+            shortest_edge_m: scale.si(seen.edge_lengths.0, 1),
             longest_edge_in_file_units: seen.edge_lengths.1,
-            size_m: metres.map(|unit| vector((high - low) * unit)),
-            centroid_m: metres.map(|unit| vector(seen.centroid * unit)),
-            volume_m3: metres.map(|unit| seen.volume * unit.powi(3)),
-            area_m2: metres.map(|unit| seen.area * unit.powi(2)),
+            longest_edge_m: scale.si(seen.edge_lengths.1, 1),
             closed: seen.is_closed(),
             orientation: orientation(seen.orientation).to_owned(),
-            shells: shells(&seen),
+            wrong_facing: wrong_facing(&seen).len(),
+            wrong_facing_places: flaws.wrong_facing,
+            shell_count: seen.shells.len(),
+            shells: shells(&seen, scale),
             genus: seen.genus,
             hole_count: seen.holes.len(),
-            holes: holes(&seen),
+            holes: holes(&seen, scale),
             non_manifold_edges: seen.non_manifold_edges.len(),
+            non_manifold_edge_places: flaws.non_manifold_edges,
             pinched_vertices: seen.pinched_vertices.len(),
+            pinched_vertex_places: flaws.pinched_vertices,
+            touching_vertices: seen.pinched_vertices.iter().filter(|vertex| vertex.between_shells).count(),
             duplicate_facets: seen.duplicate_facets.len(),
+            duplicate_facet_places: flaws.duplicate_facets,
             degenerate_facets: seen.degenerate_facets.len(),
+            degenerate_facet_places: flaws.degenerate_facets,
             slivers: seen.slivers.len(),
+            sliver_places: flaws.slivers,
             intersections: seen.intersections.pairs.len(),
             intersections_complete: seen.intersections.complete,
-            intersection_places_in_file_units: seen
-                .intersections
-                .pairs
-                .iter()
-                .take(MOST_LISTED)
-                .map(|pair| vector(pair.place))
-                .collect(),
-            crease_count: seen.creases.0,
-            crease_length_in_file_units: seen.creases.1,
-            sharpest_turn_deg: seen.sharpest_turn_deg,
+            intersection_places: flaws.intersections,
+            creases: creases(&seen, options.crease_deg.unwrap_or(SMOOTH_SURFACE_CREASE_DEG), scale),
             kind: match seen.character.kind {
                 CharacterKind::FacetedSmooth => "faceted smooth",
                 CharacterKind::Polyhedral => "polyhedral",
             }
             .to_owned(),
             kind_reason: seen.character.reason.clone(),
-            geometry: body.as_ref().map(|body| {
-                match body.geometry.geometry {
-                    FacetedGeometry::Flat => "flat",
-                    FacetedGeometry::Curved => "curved",
-                }
-                .to_owned()
-            }),
-            geometry_reason: body.as_ref().map(|body| body.geometry.reason.clone()),
-            relative_geometry_error: body.as_ref().map(|body| body.relative_geometry_error),
-            macro_triangles: body.as_ref().map(|body| body.blueprint.triangles.len()),
-            mended,
+            solved_as,
+            mended: self.mended.clone(),
             usable: refusal.is_none(),
-            next_step: refusal.as_ref().map(|error| error.hint().to_owned()),
             refusal: refusal.map(|error| error.to_string()),
+            mending_suffices: next.as_ref().and_then(|next| next.mending_suffices),
+            next_step: next.map(|next| next.text),
+            next_command: None,
+            written: None,
             notes: self.notes.clone(),
         }
     }
+
+    /// Mends a copy to see whether that is worth offering.
+    fn next_step(&self, refusal: &SurfaceError) -> NextStep {
+        if self.mended.is_some() {
+            return NextStep { mending_suffices: None, text: refusal.hint_beyond_mending().to_owned() };
+        }
+        let text = match refusal_of(&self.mended().mesh) {
+            None => return NextStep { mending_suffices: Some(true), text: refusal.hint().to_owned() },
+            Some(left) if std::mem::discriminant(&left) == std::mem::discriminant(refusal) => {
+                left.hint_beyond_mending().to_owned()
+            }
+            Some(left) => format!("mending would not do: then {left}; {}", left.hint_beyond_mending()),
+        };
+        NextStep { mending_suffices: Some(false), text }
+    }
 }
 
-fn orientation(orientation: Orientation) -> &'static str {
+/// Whether it is a device, which may never end.
+#[cfg(unix)]
+fn is_endless(path: &Path) -> bool {
+    use std::os::unix::fs::FileTypeExt;
+    std::fs::metadata(path).is_ok_and(|file| file.file_type().is_char_device() || file.file_type().is_block_device())
+}
+
+#[cfg(not(unix))]
+fn is_endless(_: &Path) -> bool {
+    false
+}
+
+struct NextStep {
+    mending_suffices: Option<bool>,
+    text: String,
+}
+
+fn refusal_of(mesh: &TriangleMesh) -> Option<SurfaceError> {
+    usable(mesh, &examine(mesh)).err()
+}
+
+pub(super) fn orientation(orientation: Orientation) -> &'static str {
     match orientation {
         Orientation::Outward => "outward",
         Orientation::Inward => "inward",
@@ -218,25 +255,4 @@ fn orientation(orientation: Orientation) -> &'static str {
         Orientation::Impossible => "impossible",
         Orientation::Consistent => "consistent",
     }
-}
-
-fn shells(seen: &Examination) -> Vec<ShellReport> {
-    let report = |shell: &crate::surface::Shell| ShellReport {
-        facets: shell.facets,
-        closed: shell.closed,
-        volume_in_file_units: shell.volume,
-        area_in_file_units: shell.area,
-        genus: shell.genus,
-        inside_shell: shell.inside,
-    };
-    seen.shells.iter().map(report).collect()
-}
-
-fn holes(seen: &Examination) -> Vec<HoleReport> {
-    let report = |hole: &crate::surface::Hole| HoleReport {
-        edges: hole.vertices.len(),
-        length_in_file_units: hole.length,
-        place_in_file_units: [hole.place.x, hole.place.y, hole.place.z],
-    };
-    seen.holes.iter().take(MOST_LISTED).map(report).collect()
 }

@@ -1,6 +1,6 @@
 //! The answer to `regime` as text: the verdict and what decides it, what follows on the way, and every number.
 
-use super::drag_text::Assumed;
+use super::drag::Assumed;
 use super::numbers::{GLUE, digits_for, percent, plus_minus, si, temperature};
 use super::sheet::{Sheet, Style, Tone, sentence};
 use crate::physical::quantity::{DisplayUnit, format_number};

@@ -1,164 +1,180 @@
-//! A surface as text: what it is, what is wrong with it, and whether the solver can trust it.
+//! A surface as text: whether the solver can trust it, what is wrong with it and where, and what it is like.
 
 use super::numbers::percent;
 use super::sheet::{Sheet, Style, Tone, sentence};
-use crate::physical::quantity::format_number;
-use crate::question::SurfaceReport;
+use super::surface_flaws_text::{flaws, pieces};
+use super::surface_units::{Units, area, volume};
+use crate::question::{CreaseReport, SurfaceReport};
+use crate::surface::SMOOTH_SURFACE_CREASE_DEG;
 
-/// Digits of lengths and sizes.
-const DIGITS: usize = 4;
+/// Geometry errors below this are rounding.
+const NO_ERROR: f64 = 1e-9;
+
+/// Width of a column in the table of angles, and of what stands before its rows.
+const BAND_COLUMN: usize = 9;
+const BAND_LABEL: usize = 14;
 
 /// The report as text.
 pub fn surface_text(report: &SurfaceReport, style: Style) -> String {
     let mut sheet = Sheet::new(style);
-    let unit = report.unit.as_deref().unwrap_or("file units");
-    let number = |value: f64| format_number(value, DIGITS);
-    let place = |x: &[f64; 3]| x.map(number).join(", ");
+    let units = Units::of(report);
     sheet.title(&report.name);
     sheet.gap();
-    match (report.usable, &report.refusal) {
-        (true, _) => sheet.toned_item("verdict", Tone::Good, "usable", ": the solver takes this surface as it is"),
-        (false, refusal) => {
-            let why = refusal.as_deref().unwrap_or("the surface can't be used");
-            sheet.toned_item("verdict", Tone::Bad, "refused", &format!(": {why}"));
-            if let Some(step) = &report.next_step {
-                sheet.item("next", &sentence(step));
-            }
-        }
-    }
-    for done in &report.mended {
-        sheet.item("mended", &sentence(done));
-    }
+    verdict(&mut sheet, report);
     sheet.gap();
-    let [x, y, z] = report.size_in_file_units.map(number);
-    sheet.item("size", &format!("{x} x {y} x {z} {unit} along x, y, z"));
-    sheet.item(
-        "",
-        &format!(
-            "volume {} and surface {} in {unit} cubed and squared; centroid at {}",
-            number(report.volume_in_file_units),
-            number(report.area_in_file_units),
-            place(&report.centroid_in_file_units),
-        ),
-    );
-    if report.unit.is_none() {
-        sheet.item("", "the file does not tell its unit, and none was given");
-    }
-    sheet.item(
-        "made of",
-        &format!(
-            "{} facets on {} vertices, edges from {} to {} {unit}",
-            report.facets,
-            report.vertices,
-            number(report.shortest_edge_in_file_units),
-            number(report.longest_edge_in_file_units)
-        ),
-    );
-    if let Some(format) = &report.format {
-        sheet.item("", &format!("read from {format}"));
-    }
-    sheet.item("pieces", &pieces(report));
-    sheet.item("closed", &closed(report, unit));
-    for hole in &report.holes {
-        sheet.item(
-            "",
-            &format!(
-                "a hole of {} edges, {} {unit} around, near {}",
-                hole.edges,
-                number(hole.length_in_file_units),
-                place(&hole.place_in_file_units)
-            ),
-        );
-    }
-    sheet.item("facing", facing(&report.orientation));
-    sheet.item("flaws", &flaws(report));
-    for x in &report.intersection_places_in_file_units {
-        sheet.item("", &format!("it crosses itself near {}", place(x)));
-    }
-    sheet.item(
-        "creases",
-        &format!(
-            "{} edges of 40 degrees or more, {} {unit} long in all; the sharpest turns by {:.0} degrees",
-            report.crease_count,
-            number(report.crease_length_in_file_units),
-            report.sharpest_turn_deg
-        ),
-    );
-    sheet.item("looks", &sentence(&report.kind_reason));
-    if let (Some(geometry), Some(error), Some(count)) =
-        (&report.geometry, report.relative_geometry_error, report.macro_triangles)
-    {
-        sheet.item(
-            "solved as",
-            &format!(
-                "{geometry} triangles, {count} to begin with; {}",
-                if error < 1e-9 {
-                    "they are the body itself".to_owned()
-                } else {
-                    format!(
-                        "they differ from the smooth body by {} of its drag, at a guess on the safe side",
-                        percent(error)
-                    )
-                }
-            ),
-        );
-    }
+    size(&mut sheet, report, &units);
+    sheet.gap();
+    pieces(&mut sheet, report, &units);
+    flaws(&mut sheet, report, &units);
+    sheet.gap();
+    creases(&mut sheet, &report.creases, &units);
+    sheet.item("looks like", &format!("{}.", report.kind_reason));
+    solved_as(&mut sheet, report);
     for note in &report.notes {
         sheet.item("note", &sentence(note));
     }
     sheet.finish()
 }
 
-fn pieces(report: &SurfaceReport) -> String {
-    let holes_through = |genus: Option<usize>| match genus {
-        Some(0) => String::new(),
-        Some(1) => ", with one hole through it like a ring".to_owned(),
-        Some(count) => format!(", with {count} holes through it"),
-        None => String::new(),
+fn verdict(sheet: &mut Sheet, report: &SurfaceReport) {
+    let as_it_is = match &report.mended {
+        Some(done) if !done.is_empty() => "mended as told below",
+        _ => "as it is",
     };
-    match report.shells.as_slice() {
-        [one] => format!("one{}", holes_through(one.genus)),
-        shells => {
-            let inside = shells.iter().filter(|shell| shell.inside_shell.is_some()).count();
-            let inside = if inside > 0 { format!(", {inside} of them inside others") } else { String::new() };
-            format!("{}{inside}", shells.len())
+    match &report.refusal {
+        None => {
+            sheet.toned_item("verdict", Tone::Good, "usable", &format!(": the solver takes this surface {as_it_is}"));
+            if report.unit.is_none() {
+                sheet.item(
+                    "",
+                    "The file doesn't tell its unit, and `drag` must be told: add `--unit um`, or what it is.",
+                );
+            }
+        }
+        Some(why) => {
+            let still = if report.mended.is_some() { ", still" } else { "" };
+            sheet.toned_item("verdict", Tone::Bad, "refused", &format!("{still}: {why}"));
+            if let Some(step) = &report.next_step {
+                match &report.next_command {
+                    None => sheet.item("next", &sentence(step)),
+                    Some(command) => {
+                        sheet.item("next", &format!("{} Here mending suffices:", sentence(step)));
+                        // Not wrapped, so that it can be copied.
+                        sheet.line("", command);
+                    }
+                }
+            }
+        }
+    }
+    match report.mended.as_deref() {
+        None => {}
+        Some([]) => sheet.item("mended", "nothing: there was nothing that mending could change"),
+        Some(done) => {
+            for done in done {
+                sheet.item("mended", &sentence(done));
+            }
+        }
+    }
+    if let Some(written) = &report.written {
+        let file = format!("{}, {} facets as {}", written.path, written.facets, written.format);
+        match (&written.refusal, report.usable) {
+            (None, _) => sheet.item("written", &format!("{file}; read back, the solver takes it")),
+            (Some(_), false) => {
+                let flaws =
+                    if report.mended.is_some() { "with what mending left" } else { "with its flaws, not mended" };
+                sheet.item("written", &format!("{file}, {flaws}: the solver refuses it too"));
+            }
+            (Some(why), true) => {
+                let file = format!(": {file} loses digits that matter: read back, {why}");
+                sheet.toned_item("written", Tone::Bad, "spoiled", &file);
+                sheet.item(
+                    "next",
+                    "Write .obj, .ply, .off or .msh, which keep all digits, or move the body to the origin.",
+                );
+            }
         }
     }
 }
 
-fn closed(report: &SurfaceReport, unit: &str) -> String {
-    match (report.closed, report.hole_count) {
-        (true, _) => "yes".to_owned(),
-        (false, 0) => "no".to_owned(),
-        (false, 1) => format!("no: one hole, place in {unit}"),
-        (false, count) => format!("no: {count} holes, places in {unit}"),
+fn size(sheet: &mut Sheet, report: &SurfaceReport, units: &Units) {
+    let [x, y, z] = report.size_in_file_units.map(|edge| units.length(edge));
+    sheet.item("size", &format!("{x} x {y} x {z} {} along x, y, z", units.name));
+    let area = area(report.area_in_file_units, report.area_m2);
+    let volume = match report.volume_in_file_units {
+        0.0 if !report.closed => "no volume, since it is not closed".to_owned(),
+        in_file_units => format!("volume {}", volume(in_file_units, report.volume_m3)),
+    };
+    sheet.item("", &format!("{volume}; surface {area}"));
+    let of_what = if report.volume_in_file_units > 0.0 { "centroid" } else { "centroid of the surface" };
+    sheet.item("", &format!("{of_what} at {} {}", units.place(&report.centroid_in_file_units), units.name));
+    sheet.item(
+        "made of",
+        &format!(
+            "{} facets on {} vertices, edges from {} to {} {}",
+            report.facets,
+            report.vertices,
+            units.length(report.shortest_edge_in_file_units),
+            units.length(report.longest_edge_in_file_units),
+            units.name
+        ),
+    );
+    if let Some(format) = &report.format {
+        sheet.item("", &format!("read from {format}"));
     }
 }
 
-fn facing(orientation: &str) -> &'static str {
-    match orientation {
-        "outward" => "outward, as it must",
-        "inward" => "inward: the surface is inside out",
-        "mixed" => "mixed: some facets face the other way than their neighbours",
-        "impossible" => "no choice of directions makes all neighbours agree",
-        _ => "neighbours agree, but an open surface has no outside",
-    }
+fn creases(sheet: &mut Sheet, creases: &CreaseReport, units: &Units) {
+    let from = angle(creases.from_deg);
+    let sharpest = format!("the sharpest edge turns by {:.0} degrees", creases.sharpest_turn_deg);
+    sheet.item(
+        "creases",
+        &match creases.count {
+            0 => format!("none of {from} degrees or more; {sharpest}"),
+            count => format!(
+                "{count} {} of {from} degrees or more, {} {} in all; {sharpest}",
+                if count == 1 { "edge" } else { "edges" },
+                units.length(creases.length_in_file_units),
+                units.name
+            ),
+        },
+    );
+    let row = |label: &str, entry: &dyn Fn(usize) -> String| {
+        let entries = (0..creases.by_angle.len()).map(|k| format!("{:>BAND_COLUMN$}", entry(k)));
+        format!("{label:<BAND_LABEL$}{}", entries.collect::<String>())
+    };
+    let last = creases.by_angle.len().saturating_sub(1);
+    let band = |k: usize| {
+        let band = &creases.by_angle[k];
+        if k == last { format!("> {}", band.from_deg) } else { format!("{}-{}", band.from_deg, band.to_deg) }
+    };
+    sheet.line("", &row("degrees", &band));
+    sheet.line("", &row("edges", &|k| creases.by_angle[k].edges.to_string()));
+    sheet.line("", &row(&units.length_heading, &|k| units.length(creases.by_angle[k].length_in_file_units)));
 }
 
-fn flaws(report: &SurfaceReport) -> String {
-    let more = if report.intersections_complete { "" } else { " or more" };
-    let counts = [
-        (report.duplicate_facets, "facets are there twice"),
-        (report.degenerate_facets, "facets have no area"),
-        (report.slivers, "facets are slivers"),
-        (report.non_manifold_edges, "edges belong to more than two facets"),
-        (report.pinched_vertices, "vertices pinch the surface"),
-        (report.intersections, "pairs of facets cross"),
-    ];
-    let found = counts.iter().filter(|(count, _)| *count > 0).map(|(count, what)| {
-        let more = if what.contains("cross") { more } else { "" };
-        format!("{count}{more} {what}")
-    });
-    let found = found.collect::<Vec<_>>();
-    if found.is_empty() { "none".to_owned() } else { found.join("; ") }
+/// Degrees without needless digits.
+fn angle(degrees: f64) -> String {
+    format!("{}", (100.0 * degrees).round() / 100.0)
+}
+
+fn solved_as(sheet: &mut Sheet, report: &SurfaceReport) {
+    let Some(solved) = &report.solved_as else { return };
+    let error = solved.relative_geometry_error;
+    let difference = if error < NO_ERROR {
+        "they are the body itself".to_owned()
+    } else {
+        format!("they differ from the smooth body by {} of its drag, at a guess on the safe side", percent(error))
+    };
+    sheet.item(
+        "solved as",
+        &format!("{} triangles, {} to begin with; {difference}", solved.geometry, solved.macro_triangles),
+    );
+    let (asked, kept) = (report.creases.from_deg, solved.creases_from_deg);
+    if asked != SMOOTH_SURFACE_CREASE_DEG {
+        let kept = angle(kept);
+        sheet.item(
+            "",
+            &format!("For study, edges of {kept} degrees or more are kept sharp here; `drag` decides itself."),
+        );
+    }
 }

@@ -12,7 +12,7 @@ const BETWEEN: usize = 5;
 
 /// A tensor on its way to text.
 pub(super) struct TensorText {
-    pub what: &'static str,
+    pub what: String,
     pub tensor: Tensor,
     pub unit: DisplayUnit,
     pub digits: usize,

@@ -94,6 +94,16 @@ impl Blueprint {
         Self { charts: charts.map(placed).collect(), triangles }
     }
 
+    /// The same body with even grids: for facets that are looked at and written, where grading towards creases serves
+    /// nothing, makes needles, and bends flat facets through each other.
+    pub fn ungraded(&self) -> Self {
+        let mut even = self.clone();
+        for triangle in &mut even.triangles {
+            triangle.grading = Grading::Plain;
+        }
+        even
+    }
+
     /// Number of panels after cutting each macro edge into `n`.
     pub fn panel_count(&self, n: usize) -> usize {
         self.triangles.len() * n * n

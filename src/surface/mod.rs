@@ -22,9 +22,9 @@ pub mod triangle_rule;
 pub use blueprint::{Blueprint, Geometry, Grading, MacroTriangle};
 pub use chart::{Chart, Placed, Placement};
 pub use examine::{
-    ABSURD_ASPECT, Character, CharacterKind, Examination, Hole, Intersection, Intersections, MendOptions, Mended,
-    NonManifoldEdge, Orientation, PinchedVertex, SLIVER_ASPECT, SMOOTH_SURFACE_CREASE_DEG, Shell, Sliver, SurfaceError,
-    examine, mend, usable,
+    ABSURD_ASPECT, Character, CharacterKind, EdgeTurn, Examination, Hole, Intersection, Intersections, MendOptions,
+    Mended, NonManifoldEdge, Orientation, PinchedVertex, SLIVER_ASPECT, SMOOTH_SURFACE_CREASE_DEG, Shell, Sliver,
+    SurfaceError, examine, mend, usable,
 };
 pub use faceted::{
     FacetedBody, FacetedGeometry, FacetedLayout, FacetedOptions, GeometryChoice, LayoutChoice, SixNodeChart, faceted,

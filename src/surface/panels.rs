@@ -44,6 +44,38 @@ pub struct Panels {
 }
 
 impl Panels {
+    /// The surfaces of several bodies as one, body after body: vertices, nodes and shells of each count on from those of the
+    /// one before. Coarser node sets are kept as far as every body has them.
+    pub fn joined(parts: Vec<Panels>) -> Self {
+        let levels = parts.iter().map(|part| part.coarsenings.len()).min().unwrap_or(0);
+        let empty = || Prolongation { coarse_count: 0, rows: Vec::new() };
+        let mut whole = Self {
+            panels: Vec::new(),
+            vertex_count: 0,
+            node_count: 0,
+            shell_count: 0,
+            coarsenings: (0..levels).map(|_| empty()).collect(),
+        };
+        for part in parts {
+            for mut panel in part.panels {
+                panel.vertices = panel.vertices.map(|vertex| vertex + whole.vertex_count);
+                panel.nodes = panel.nodes.map(|node| node + whole.node_count);
+                panel.shell += whole.shell_count;
+                whole.panels.push(panel);
+            }
+            whole.vertex_count += part.vertex_count;
+            whole.node_count += part.node_count;
+            whole.shell_count += part.shell_count;
+            for (whole, part) in whole.coarsenings.iter_mut().zip(part.coarsenings) {
+                let before = whole.coarse_count;
+                let counted_on = |row: Vec<(usize, f64)>| row.into_iter().map(|(node, w)| (node + before, w)).collect();
+                whole.rows.extend(part.rows.into_iter().map(counted_on));
+                whole.coarse_count += part.coarse_count;
+            }
+        }
+        whole
+    }
+
     /// The smallest box around all panel corners and centres, as two opposite corners.
     pub fn bounding_box(&self) -> (Point, Point) {
         let mut low = Point::repeat(f64::INFINITY);

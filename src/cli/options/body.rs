@@ -2,9 +2,9 @@
 
 use std::path::Path;
 
-use clap::Args;
+use clap::{Args, ValueEnum};
 use slowmote::physical::quantity::{parse_angle, parse_length};
-use slowmote::question::{Body, CaseBody, LengthUnit, Placing, Turn};
+use slowmote::question::{Body, CaseBody, LengthUnit, Pieces, Placing, StandingBody, Turn};
 use slowmote::surface::{Geometry, Point, SurfaceFormat};
 
 use super::values::{direction, place};
@@ -22,6 +22,10 @@ pub struct BodyOptions {
     #[arg(long, value_name = "UNIT", value_parser = length_unit)]
     pub unit: Option<LengthUnit>,
 
+    /// What the pieces of a surface file are, if it has several; otherwise such a file is refused
+    #[arg(long, value_enum, value_name = "WHAT")]
+    pub pieces: Option<PiecesName>,
+
     /// Turns the body about a fixed axis through its centroid; repeat it for more turns, in their order
     #[arg(long, value_name = "ANGLE@AXIS", value_parser = turn, allow_hyphen_values = true)]
     pub turn: Vec<Turn>,
@@ -33,6 +37,15 @@ pub struct BodyOptions {
     /// The point whose velocity is meant and that torques are about [default: the centroid]
     #[arg(long, value_name = "X,Y,Z", value_parser = place, allow_hyphen_values = true)]
     pub reference: Option<Point>,
+}
+
+/// What the pieces of a surface file are.
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub enum PiecesName {
+    /// One rigid body
+    Joined,
+    /// Bodies that move on their own
+    Apart,
 }
 
 impl BodyOptions {
@@ -52,6 +65,10 @@ impl BodyOptions {
         if let (None, Some(unit)) = (&self.unit, &body.unit) {
             self.unit = Some(length_unit(unit).map_err(wrong)?);
         }
+        if let (None, Some(pieces)) = (self.pieces, &body.pieces) {
+            let unknown = |_| wrong(format!("`{pieces}` is not what pieces can be: `joined` or `apart`"));
+            self.pieces = Some(PiecesName::from_str(pieces, false).map_err(unknown)?);
+        }
         if self.turn.is_empty() {
             self.turn = body.turn.iter().map(|text| turn(text)).collect::<Result<_, _>>().map_err(wrong)?;
         }
@@ -61,21 +78,26 @@ impl BodyOptions {
         Ok(())
     }
 
-    /// Makes or reads the body, with panels of this geometry or of the one that fits it.
+    /// Makes or reads the body, or the bodies that are the pieces of a file, where they stand, with panels of this geometry or
+    /// of the one that fits.
     ///
     /// # Errors
     /// There is no such shape or file, or it can't be used.
-    pub fn body(&self, geometry: Option<Geometry>) -> Result<Body, Failure> {
-        Body::read(&self.body, self.unit.as_ref(), geometry).map_err(|error| {
+    pub fn bodies(&self, geometry: Option<Geometry>) -> Result<Vec<StandingBody>, Failure> {
+        let pieces = match self.pieces {
+            None => Pieces::Untold,
+            Some(PiecesName::Joined) => Pieces::Joined,
+            Some(PiecesName::Apart) => Pieces::Apart,
+        };
+        let read = Body::read(&self.body, self.unit.as_ref(), geometry, pieces).map_err(|error| {
             let hints = error.hints();
-            let failure = Failure::of(&error);
-            hints.into_iter().fold(failure, Failure::hint)
-        })
-    }
-
-    /// How it stands.
-    pub fn placing(&self) -> Placing {
-        Placing { turns: self.turn.clone(), at: self.at }
+            hints.into_iter().fold(Failure::of(&error), Failure::hint)
+        })?;
+        let placing = Placing { turns: self.turn.clone(), at: self.at };
+        match <[Body; 1]>::try_from(read) {
+            Ok([body]) => Ok(vec![StandingBody { body, placing }]),
+            Err(pieces) => Ok(StandingBody::together(pieces, &placing)),
+        }
     }
 }
 

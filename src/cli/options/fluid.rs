@@ -9,7 +9,10 @@ use super::parse_with;
 use crate::cli::Failure;
 
 /// The fluid that is taken, and said aloud, when none is given.
-const DEFAULT_FLUID: &str = "water";
+pub const DEFAULT_FLUID: &str = "water";
+
+/// The temperature that is taken, and said aloud, when none is given: that of [`default_temperature`].
+pub const DEFAULT_TEMPERATURE: &str = "20degC";
 
 /// Which fluid, how warm.
 #[derive(Debug, Clone, Args)]

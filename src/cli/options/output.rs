@@ -17,6 +17,14 @@ pub struct OutputOptions {
     pub quiet: bool,
 }
 
+/// A record of the answer.
+#[derive(Debug, Clone, Args)]
+pub struct RecordOptions {
+    /// Writes the answer with all that it takes to compute it again (`slowmote again FILE`)
+    #[arg(long, value_name = "FILE", help_heading = "Output")]
+    pub record: Option<PathBuf>,
+}
+
 impl OutputOptions {
     /// Stands for stdout in place of a file's name.
     pub const STDOUT: &'static str = "-";

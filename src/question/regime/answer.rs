@@ -2,6 +2,7 @@
 //!
 //! This is the documented schema `slowmote.regime.1`. A key that does not apply is null, never left out.
 
+use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use crate::question::{FluidAnswer, Vector, Verdict};
@@ -10,7 +11,7 @@ use crate::question::{FluidAnswer, Vector, Verdict};
 pub const REGIME_SCHEMA: &str = "slowmote.regime.1";
 
 /// What `regime` answers.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RegimeAnswer {
     /// Name and version of this layout: `slowmote.regime.1`.
@@ -38,7 +39,7 @@ pub struct RegimeAnswer {
 }
 
 /// The body as far as it is known without solving.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RegimeBodyAnswer {
     /// What it was called.
@@ -62,7 +63,7 @@ pub struct RegimeBodyAnswer {
 }
 
 /// A channel, and the laminar, developed flow in it.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct ChannelAnswer {
     /// `tube`, `slot` or `duct`.
@@ -106,7 +107,7 @@ pub struct ChannelAnswer {
 }
 
 /// A motion of the body through the fluid, by Stokes's law.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RegimeMotion {
     /// What moves it: `speed`, `flow`, `force` or `weight`.
@@ -124,7 +125,7 @@ pub struct RegimeMotion {
 }
 
 /// The verdict on the regime.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RegimeValidity {
     /// The worst verdict of the numbers on the flow and the body; null if there is none.
@@ -147,7 +148,7 @@ pub struct RegimeValidity {
 }
 
 /// What a number is about.
-#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Serialize, Deserialize)]
+#[derive(Debug, Clone, Copy, PartialEq, Eq, Hash, Serialize, Deserialize, JsonSchema)]
 #[serde(rename_all = "lowercase")]
 pub enum Concern {
     /// Whether the flow is creeping.
@@ -159,7 +160,7 @@ pub enum Concern {
 }
 
 /// One dimensionless number and what it says.
-#[derive(Debug, Clone, PartialEq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct RegimeNumber {
     /// Its name.
@@ -199,7 +200,7 @@ impl RegimeNumber {
 }
 
 /// Something that was not told.
-#[derive(Debug, Clone, PartialEq, Eq, Serialize, Deserialize)]
+#[derive(Debug, Clone, PartialEq, Eq, Serialize, Deserialize, JsonSchema)]
 #[serde(deny_unknown_fields)]
 pub struct Untold {
     /// What: an option, or a part of one.

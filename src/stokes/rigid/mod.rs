@@ -20,11 +20,13 @@
 
 mod average;
 mod centre;
+mod grand;
 mod mobility;
 mod motion;
 mod principal;
 mod resistance;
 
+pub use grand::{GrandMobility, GrandResistance};
 pub use mobility::Mobility;
 pub use motion::{Motion, Wrench};
 pub use principal::Principal;

@@ -5,4 +5,4 @@ mod clouds;
 mod moments;
 
 pub use assembly::{assemble, bytes_needed};
-pub use moments::Moments;
+pub use moments::{Bodies, Moments};

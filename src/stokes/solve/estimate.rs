@@ -5,7 +5,7 @@
 //! add up to `d1/(q - 1)`. The ratio is observed, but kept between bounds: a sequence that is not yet asymptotic may
 //! show any number. The stated error is [`SAFETY`] times that.
 
-use nalgebra::{Matrix3, Matrix6};
+use nalgebra::DMatrix;
 
 use super::RelativeError;
 
@@ -21,9 +21,12 @@ const SAFETY: f64 = 1.5;
 /// What rounding and the far field's quadrature leave, whatever the levels say.
 const FLOOR: f64 = 1e-7;
 
-/// Error of `fine`, given the resistances on coarser spaces, finest first, and the quadrature's own error; and the ratio of
+/// Rows of one body.
+const ROWS: usize = 6;
+
+/// Error of `fine`, of one body or several, given the resistances on coarser spaces, finest first, and the quadrature's own error; and the ratio of
 /// changes in the slower of force and torque.
-pub(super) fn relative_error(fine: &Matrix6<f64>, coarser: &[Matrix6<f64>], quadrature: f64) -> (RelativeError, f64) {
+pub(super) fn relative_error(fine: &DMatrix<f64>, coarser: &[DMatrix<f64>], quadrature: f64) -> (RelativeError, f64) {
     let Some(first) = coarser.first() else {
         return (RelativeError { force: 1.0, torque: 1.0, coupling: 1.0 }, UNKNOWN_RATIO);
     };
@@ -50,28 +53,41 @@ const EXTRAPOLATION_RATIO: f64 = 8.0;
 /// The value that the sequence tends to: `R + (R - R_coarse)/(q - 1)` with the observed ratio `q` of the slower of force and
 /// torque, but never less than [`EXTRAPOLATION_RATIO`]. Symmetric and positive as `R` is, since the change is. Unchanged
 /// where only one coarser space is known.
-pub(super) fn extrapolated(fine: &Matrix6<f64>, coarser: &[Matrix6<f64>]) -> Matrix6<f64> {
-    let [first, second, ..] = coarser else { return *fine };
+pub(super) fn extrapolated(fine: &DMatrix<f64>, coarser: &[DMatrix<f64>]) -> DMatrix<f64> {
+    let [first, second, ..] = coarser else { return fine.clone() };
     let (now, before) = (change(fine, fine, first), change(fine, first, second));
     let ratio = (before[0] / now[0]).min(before[1] / now[1]);
     let ratio = if ratio.is_finite() { ratio.max(EXTRAPOLATION_RATIO) } else { EXTRAPOLATION_RATIO };
     fine + (fine - first) / (ratio - 1.0)
 }
 
-/// Changes from `coarse` to `fine` relative to `whole`: worst direction of force and torque, and coupling.
-fn change(whole: &Matrix6<f64>, fine: &Matrix6<f64>, coarse: &Matrix6<f64>) -> [f64; 3] {
+/// Changes from `coarse` to `fine` relative to `whole`: worst direction of the forces and of the torques of all bodies
+/// together, and the coupling of any two.
+pub(super) fn change(whole: &DMatrix<f64>, fine: &DMatrix<f64>, coarse: &DMatrix<f64>) -> [f64; 3] {
     let difference = fine - coarse;
-    let block = |matrix: &Matrix6<f64>, i: usize, j: usize| matrix.fixed_view::<3, 3>(3 * i, 3 * j).into_owned();
-    let force = worst_direction(&block(&difference, 0, 0), &block(whole, 0, 0));
-    let torque = worst_direction(&block(&difference, 1, 1), &block(whole, 1, 1));
-    let scale = (block(whole, 0, 0).trace() * block(whole, 1, 1).trace()).sqrt() / 3.0;
-    let coupling = block(&difference, 1, 0).norm() / scale;
-    [force, torque, coupling]
+    let force = worst_direction(&part(&difference, 0), &part(whole, 0));
+    let torque = worst_direction(&part(&difference, 3), &part(whole, 3));
+    let bodies = whole.nrows() / ROWS;
+    let size = |body: usize, first: usize| {
+        (0..3).map(|k| whole[(ROWS * body + first + k, ROWS * body + first + k)]).sum::<f64>() / 3.0
+    };
+    let coupling = (0..bodies).flat_map(|i| (0..bodies).map(move |j| (i, j))).map(|(i, j)| {
+        let block = difference.fixed_view::<3, 3>(ROWS * i + 3, ROWS * j);
+        block.norm() / (size(i, 3) * size(j, 0)).sqrt()
+    });
+    [force, torque, coupling.fold(0.0, f64::max)]
+}
+
+/// The rows and columns of all bodies' forces (`first` = 0) or torques (3).
+fn part(matrix: &DMatrix<f64>, first: usize) -> DMatrix<f64> {
+    let count = matrix.nrows() / ROWS * 3;
+    let at = |k: usize| ROWS * (k / 3) + first + k % 3;
+    DMatrix::from_fn(count, count, |i, j| matrix[(at(i), at(j))])
 }
 
 /// Largest `|x^T D x| / x^T W x`.
-fn worst_direction(difference: &Matrix3<f64>, whole: &Matrix3<f64>) -> f64 {
-    let Some(root) = whole.cholesky() else { return 1.0 };
+fn worst_direction(difference: &DMatrix<f64>, whole: &DMatrix<f64>) -> f64 {
+    let Some(root) = whole.clone().cholesky() else { return 1.0 };
     let Some(inverse) = root.l().try_inverse() else { return 1.0 };
-    (inverse * difference * inverse.transpose()).symmetric_eigenvalues().amax()
+    (&inverse * difference * inverse.transpose()).symmetric_eigenvalues().amax()
 }

@@ -2,7 +2,7 @@
 //!
 //! Spaces are nested, so by the minimum principle the resistance rises from level to level towards the exact one.
 
-use nalgebra::Matrix6;
+use nalgebra::DMatrix;
 use rayon::prelude::*;
 
 use super::dense::Factored;
@@ -21,7 +21,7 @@ pub(super) fn coarse_resistances(
     panels: &Panels,
     matrix: &[f64],
     moments: &Moments,
-) -> Result<Vec<Matrix6<f64>>, SolveError> {
+) -> Result<Vec<DMatrix<f64>>, SolveError> {
     let mut resistances = Vec::new();
     let mut prolongations = panels.coarsenings.clone();
     prolongations.truncate(WANTED_LEVELS);
@@ -46,7 +46,7 @@ pub(super) fn coarse_resistances(
 }
 
 /// `8 pi B^T A^-1 B`.
-fn resistance_of(matrix: Vec<f64>, right: &[f64], nodes: usize) -> Result<Matrix6<f64>, SolveError> {
+fn resistance_of(matrix: Vec<f64>, right: &[f64], nodes: usize) -> Result<DMatrix<f64>, SolveError> {
     let factored = Factored::new(matrix, 3 * nodes, Factor::Cholesky)?;
     let mut tractions = right.to_vec();
     factored.solve(&mut tractions);
@@ -54,11 +54,13 @@ fn resistance_of(matrix: Vec<f64>, right: &[f64], nodes: usize) -> Result<Matrix
 }
 
 /// `8 pi B^T F` for columns of `size` numbers, made symmetric.
-pub(super) fn energy(right: &[f64], tractions: &[f64], size: usize) -> Matrix6<f64> {
+pub(super) fn energy(right: &[f64], tractions: &[f64], size: usize) -> DMatrix<f64> {
+    let count = right.len() / size;
     let column = |values: &'_ [f64], k: usize| values[k * size..(k + 1) * size].to_vec();
-    let product =
-        Matrix6::from_fn(|i, j| column(right, i).iter().zip(column(tractions, j)).map(|(b, f)| b * f).sum::<f64>());
-    4.0 * std::f64::consts::PI * (product + product.transpose())
+    let product = DMatrix::from_fn(count, count, |i, j| {
+        column(right, i).iter().zip(column(tractions, j)).map(|(b, f)| b * f).sum::<f64>()
+    });
+    4.0 * std::f64::consts::PI * (&product + product.transpose())
 }
 
 fn restrict_columns(columns: &[f64], nodes: usize, prolongation: &Prolongation) -> Vec<f64> {

@@ -7,6 +7,6 @@ mod refine;
 mod request;
 mod solution;
 
-pub use refine::{resistance, resistance_of_panels};
-pub use request::{Factor, Observer, Request, Stage};
-pub use solution::{RelativeError, Solution, SolveError, Statistics};
+pub use refine::{grand_resistance, relative_change, resistance, resistance_of_panels};
+pub use request::{Factor, Observer, Part, Request, Stage};
+pub use solution::{GrandSolution, RelativeError, Solution, SolveError, Statistics};

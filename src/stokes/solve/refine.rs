@@ -3,10 +3,13 @@
 use std::time::Instant;
 
 use super::dense::Factored;
-use super::{Factor, Observer, Request, Solution, SolveError, Stage, Statistics, estimate, levels};
+use super::{
+    Factor, GrandSolution, Observer, Part, RelativeError, Request, Solution, SolveError, Stage, Statistics, estimate,
+    levels,
+};
 use crate::stokes::quadrature::{Instructions, PairRules};
-use crate::stokes::rigid::Resistance;
-use crate::stokes::single_layer::{self, Moments};
+use crate::stokes::rigid::GrandResistance;
+use crate::stokes::single_layer::{self, Bodies, Moments};
 use crate::surface::{Blueprint, Panels, Point};
 
 /// Above this many unknowns Cholesky's third of the work is felt; below, LU is the reference.
@@ -18,8 +21,8 @@ const AIM: f64 = 0.6;
 /// Macro triangles from which on the first mesh is the macro triangles themselves.
 const RESOLVED_FROM: usize = 200;
 
-/// The cost grows like this power of the cuts: four for the pairs; the factorisation (six) is small until late.
-const COST_POWER: i32 = 4;
+/// The cost grows like this power of the panels: two for the pairs; the factorisation (three) is small until late.
+const COST_POWER: i32 = 2;
 
 /// Most that the number of cuts grows in one step: beyond, the observed order is not to be trusted.
 const LARGEST_STEP: f64 = 2.0;
@@ -38,38 +41,70 @@ pub fn resistance(
     request: &Request,
     observer: &dyn Observer,
 ) -> Result<Solution, SolveError> {
+    let part = Part { blueprint, geometry: request.geometry, reference };
+    grand_resistance(&[part], request, observer).map(GrandSolution::of_one)
+}
+
+/// Resistance on one given surface, all of whose shells move as one body.
+///
+/// # Errors
+/// As [`resistance`].
+pub fn resistance_of_panels(
+    panels: Panels,
+    reference: Point,
+    request: &Request,
+    observer: &dyn Observer,
+) -> Result<Solution, SolveError> {
+    let bodies = Bodies::one(reference, panels.shell_count);
+    on_panels(panels, &bodies, request, observer).map(GrandSolution::of_one)
+}
+
+/// Resistance of several rigid bodies that move on their own, each about its own reference point, to the accuracy asked for.
+///
+/// # Errors
+/// As [`resistance`].
+pub fn grand_resistance(
+    parts: &[Part],
+    request: &Request,
+    observer: &dyn Observer,
+) -> Result<GrandSolution, SolveError> {
     if let Some(wanted) = request.elements {
-        let panels = blueprint.subdivide(blueprint.cuts_for(wanted), request.geometry);
-        return resistance_of_panels(panels, reference, request, observer);
+        let cuts = parts.iter().map(|part| part.blueprint.cuts_for(wanted)).collect::<Vec<_>>();
+        let (panels, bodies) = subdivided(parts, &cuts);
+        return on_panels(panels, &bodies, request, observer);
     }
     let mut request = request.clone();
     let begin = Instant::now();
     // A body of many macro triangles is already resolved by them; a shape of a few is not.
-    let mut cuts = if blueprint.triangles.len() > RESOLVED_FROM { 1 } else { 2 };
-    let mut best: Option<Solution> = None;
+    let first = |part: &Part| if part.blueprint.triangles.len() > RESOLVED_FROM { 1 } else { 2 };
+    let mut cuts = parts.iter().map(first).collect::<Vec<usize>>();
+    let mut best: Option<GrandSolution> = None;
     loop {
-        let panels = blueprint.subdivide(cuts, request.geometry);
+        let (panels, bodies) = subdivided(parts, &cuts);
         if best.is_some() && single_layer::bytes_needed(3 * panels.node_count) > request.memory_limit {
             break;
         }
         let began = Instant::now();
-        let solution = match resistance_of_panels(panels.clone(), reference, &request, observer) {
+        let solution = match on_panels(panels.clone(), &bodies, &request, observer) {
             // The matrix of a very thin body is so nearly indefinite that only finer quadrature keeps it positive.
             Err(SolveError::NotPositiveDefinite { .. }) if request.rules.is_none() => {
                 request.rules = Some(PairRules::standard());
-                resistance_of_panels(panels, reference, &request, observer)?
+                on_panels(panels, &bodies, &request, observer)?
             }
             other => other?,
         };
         let error = solution.error.worst();
         let order = solution.ratio.log2();
+        let count = solution.panels.panels.len() as f64;
         best = Some(solution);
         if error <= request.accuracy {
             break;
         }
         let growth = (error / (AIM * request.accuracy)).powf(1.0 / order).min(LARGEST_STEP);
-        let next = ((cuts as f64 * growth).ceil() as usize).next_multiple_of(2).max(cuts + 1);
-        let expected = began.elapsed().as_secs_f64() * (next as f64 / cuts as f64).powi(COST_POWER);
+        let finer = |&cuts: &usize| ((cuts as f64 * growth).ceil() as usize).next_multiple_of(2).max(cuts + 1);
+        let next = cuts.iter().map(finer).collect::<Vec<_>>();
+        let next_count = parts.iter().zip(&next).map(|(part, &n)| part.blueprint.panel_count(n) as f64).sum::<f64>();
+        let expected = began.elapsed().as_secs_f64() * (next_count / count).powi(COST_POWER);
         if begin.elapsed().as_secs_f64() + expected > request.time_limit_s {
             break;
         }
@@ -85,16 +120,32 @@ pub fn resistance(
     .ok_or(SolveError::IllConditioned { condition: f64::INFINITY })
 }
 
-/// Resistance on one given surface.
-///
-/// # Errors
-/// As [`resistance`].
-pub fn resistance_of_panels(
+/// What two resistances of the same bodies differ in, relative to the first.
+pub fn relative_change(whole: &GrandResistance, other: &GrandResistance) -> RelativeError {
+    let [force, torque, coupling] = estimate::change(&whole.matrix, &other.matrix, &whole.matrix);
+    RelativeError { force, torque, coupling }
+}
+
+/// All bodies cut, each macro edge into its body's number of parts.
+fn subdivided(parts: &[Part], cuts: &[usize]) -> (Panels, Bodies) {
+    let mut bodies = Bodies { references: Vec::new(), of_shell: Vec::new() };
+    let mut pieces = Vec::new();
+    for (body, (part, &cuts)) in parts.iter().zip(cuts).enumerate() {
+        let panels = part.blueprint.subdivide(cuts, part.geometry);
+        bodies.references.push(part.reference);
+        bodies.of_shell.extend(std::iter::repeat_n(body, panels.shell_count));
+        pieces.push(panels);
+    }
+    (Panels::joined(pieces), bodies)
+}
+
+/// The resistance on given surfaces.
+fn on_panels(
     panels: Panels,
-    reference: Point,
+    bodies: &Bodies,
     request: &Request,
     observer: &dyn Observer,
-) -> Result<Solution, SolveError> {
+) -> Result<GrandSolution, SolveError> {
     let unknowns = 3 * panels.node_count;
     let needed = single_layer::bytes_needed(unknowns);
     if needed > request.memory_limit {
@@ -107,7 +158,7 @@ pub fn resistance_of_panels(
     };
     let report = |fraction: f64| observer.progress(Stage::Assembling, unknowns, fraction);
     let mut matrix = single_layer::assemble(&panels, &rules, Instructions::best(), &report);
-    let moments = Moments::new(&panels, &reference);
+    let moments = Moments::new(&panels, bodies);
     shift_null_space(&mut matrix, &moments, unknowns, request.shift);
     observer.progress(Stage::Factorising, unknowns, 0.0);
     let coarser = levels::coarse_resistances(&panels, &matrix, &moments)?;
@@ -126,13 +177,17 @@ pub fn resistance_of_panels(
         let at = motion * unknowns + 3 * node;
         eight_pi * Point::new(tractions[at], tractions[at + 1], tractions[at + 2])
     };
-    Ok(Solution {
-        resistance: Resistance { matrix, reference },
+    let motions = 6 * bodies.references.len();
+    Ok(GrandSolution {
+        resistance: GrandResistance { matrix, references: bodies.references.clone() },
         error,
         ratio,
         coarser,
         reached: true,
-        tractions: (0..panels.node_count).map(|node| std::array::from_fn(|motion| traction(node, motion))).collect(),
+        tractions: (0..panels.node_count)
+            .map(|node| (0..motions).map(|motion| traction(node, motion)).collect())
+            .collect(),
+        panels_of_body: bodies.ranges(&panels),
         statistics: Statistics { triangles: panels.panels.len(), unknowns, factor, condition, residual },
         panels,
     })

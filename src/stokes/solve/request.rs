@@ -1,7 +1,7 @@
 //! What is asked of the solver, and how it reports while it works.
 
 use crate::stokes::quadrature::PairRules;
-use crate::surface::Geometry;
+use crate::surface::{Blueprint, Geometry, Point};
 
 /// Which factorisation solves the dense system.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -12,14 +12,25 @@ pub enum Factor {
     Cholesky,
 }
 
+/// One of several bodies.
+#[derive(Debug, Clone, Copy)]
+pub struct Part<'a> {
+    /// Its surface where it stands.
+    pub blueprint: &'a Blueprint,
+    /// The geometry of its panels.
+    pub geometry: Geometry,
+    /// Its own reference point.
+    pub reference: Point,
+}
+
 /// What is wanted.
 #[derive(Debug, Clone)]
 pub struct Request {
     /// Wanted relative accuracy of force, torque and coupling.
     pub accuracy: f64,
-    /// A fixed mesh of about this many triangles, with no adaptivity.
+    /// A fixed mesh of about this many triangles a body, with no adaptivity.
     pub elements: Option<usize>,
-    /// The geometry of the panels.
+    /// The geometry of the panels, where one body is solved; several have each their own.
     pub geometry: Geometry,
     /// The factorisation, or `None` for the solver's choice.
     pub factor: Option<Factor>,

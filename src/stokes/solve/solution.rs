@@ -1,10 +1,12 @@
 //! What the solver gives back.
 
-use nalgebra::Matrix6;
+use std::ops::Range;
+
+use nalgebra::{DMatrix, Matrix6};
 use thiserror::Error;
 
 use super::Factor;
-use crate::stokes::rigid::Resistance;
+use crate::stokes::rigid::{GrandResistance, Resistance};
 use crate::surface::{Panels, Point};
 
 /// Bounds on the relative error of the resistance against the surface that was solved.
@@ -60,6 +62,46 @@ pub struct Solution {
     pub tractions: Vec<[Point; 6]>,
     /// How it was found.
     pub statistics: Statistics,
+}
+
+/// Several solved bodies.
+#[derive(Debug, Clone)]
+pub struct GrandSolution {
+    /// The resistance, six rows a body.
+    pub resistance: GrandResistance,
+    /// Its error: the worst direction of the motions of all bodies together.
+    pub error: RelativeError,
+    /// Ratio of successive changes with refinement, in the slower of force and torque.
+    pub ratio: f64,
+    /// Resistances on coarser spaces, finest first, that the error was estimated from.
+    pub coarser: Vec<DMatrix<f64>>,
+    /// Whether the wanted accuracy was reached; always true on a fixed mesh.
+    pub reached: bool,
+    /// The surfaces that were solved, body after body.
+    pub panels: Panels,
+    /// Which panels are whose.
+    pub panels_of_body: Vec<Range<usize>>,
+    /// Traction on the fluid at each node for the six unit motions of each body.
+    pub tractions: Vec<Vec<Point>>,
+    /// How it was found.
+    pub statistics: Statistics,
+}
+
+impl GrandSolution {
+    /// The solution of all bodies but the first left out: what one body was solved for.
+    pub(super) fn of_one(self) -> Solution {
+        let six = |matrix: &DMatrix<f64>| matrix.fixed_view::<6, 6>(0, 0).into_owned();
+        Solution {
+            resistance: self.resistance.alone(0),
+            error: self.error,
+            ratio: self.ratio,
+            coarser: self.coarser.iter().map(six).collect(),
+            reached: self.reached,
+            panels: self.panels,
+            tractions: self.tractions.iter().map(|node| std::array::from_fn(|motion| node[motion])).collect(),
+            statistics: self.statistics,
+        }
+    }
 }
 
 /// Why there is no solution.

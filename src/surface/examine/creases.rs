@@ -12,6 +12,17 @@ const PLANE_DISTANCE: f64 = 1e-5;
 /// ... and their normals turn less than this.
 const PLANE_TURN_DEG: f64 = 2.0;
 
+/// How far a surface turns at one edge.
+#[derive(Debug, Clone, Copy, PartialEq)]
+pub struct EdgeTurn {
+    /// The edge's vertices, numbered from 0.
+    pub vertices: [usize; 2],
+    /// The angle between the normals of its two facets, degrees, from 0 (one plane) to 180 (folded over).
+    pub angle_deg: f64,
+    /// Its length, file units.
+    pub length: f64,
+}
+
 /// The angle in radians by which the normal turns across each edge, 0 where the facets are in one plane. Edges that do
 /// not join exactly two facets of the same orientation have `pi`: nothing is smooth there.
 pub(crate) fn turn_angles(mesh: &TriangleMesh, table: &EdgeTable) -> Vec<f64> {

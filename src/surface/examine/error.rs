@@ -24,7 +24,7 @@ pub enum SurfaceError {
         size: f64,
     },
     /// Facets without area.
-    #[error("facet {} at {} has no area ({count} such facets)", .facet + 1, At(.place))]
+    #[error("facet {} at {} has no area{}", .facet + 1, At(.place), Such(*.count, "facets"))]
     DegenerateFacet {
         /// The first such facet.
         facet: usize,
@@ -34,7 +34,7 @@ pub enum SurfaceError {
         count: usize,
     },
     /// Facets that are there twice.
-    #[error("facets {} and {} at {} have the same corners ({count} such pairs)", .facets[0] + 1, .facets[1] + 1, At(.place))]
+    #[error("facets {} and {} at {} have the same corners{}", .facets[0] + 1, .facets[1] + 1, At(.place), Such(*.count, "pairs"))]
     DuplicateFacet {
         /// The first pair.
         facets: [usize; 2],
@@ -44,7 +44,7 @@ pub enum SurfaceError {
         count: usize,
     },
     /// Edges with more than two facets.
-    #[error("the edge at {} belongs to {facets} facets instead of two ({count} such edges)", At(.place))]
+    #[error("the edge at {} belongs to {facets} facets instead of two{}", At(.place), Such(*.count, "edges"))]
     NonManifoldEdge {
         /// The middle of the first such edge, in file units.
         place: Point,
@@ -54,7 +54,7 @@ pub enum SurfaceError {
         count: usize,
     },
     /// The surface is open.
-    #[error("the surface is open: a hole of {edges} edges and length {length:.6} near {}, beside facet {} ({count} holes)", At(.place), .facet + 1)]
+    #[error("the surface is open: a hole of {edges} edges, {} long around, near {}, beside facet {}{}", short(*.length), At(.place), .facet + 1, Such(*.count, "holes"))]
     Open {
         /// The centre of the longest hole, in file units.
         place: Point,
@@ -74,7 +74,7 @@ pub enum SurfaceError {
         facet: usize,
     },
     /// Facets face different ways.
-    #[error("facet {} at {} faces inward while others face outward ({count} such facets)", .facet + 1, At(.place))]
+    #[error("facet {} at {} faces inward while others face outward{}", .facet + 1, At(.place), Such(*.count, "facets"))]
     MixedOrientation {
         /// The first facet that faces inward.
         facet: usize,
@@ -95,7 +95,7 @@ pub enum SurfaceError {
         area: f64,
     },
     /// Two pieces of the same surface touch in a vertex.
-    #[error("the surface touches itself in the vertex at {} ({count} such vertices)", At(.place))]
+    #[error("the surface touches itself in the vertex at {}{}", At(.place), Such(*.count, "vertices"))]
     PinchedVertex {
         /// The first such vertex, in file units.
         place: Point,
@@ -103,7 +103,7 @@ pub enum SurfaceError {
         count: usize,
     },
     /// The surface passes through itself.
-    #[error("facets {} and {} pass through each other or touch at {} ({count}{} such pairs)", .facets[0] + 1, .facets[1] + 1, At(.place), if *.complete { "" } else { " or more" })]
+    #[error("facets {} and {} pass through each other or touch at {}{}", .facets[0] + 1, .facets[1] + 1, At(.place), Such(*.count, if *.complete { "pairs" } else { "pairs or more" }))]
     SelfIntersecting {
         /// The first pair.
         facets: [usize; 2],
@@ -115,7 +115,7 @@ pub enum SurfaceError {
         complete: bool,
     },
     /// One piece lies inside another.
-    #[error("the piece that begins with facet {} lies inside the piece that begins with facet {} ({count} such pieces)", .inner_facet + 1, .outer_facet + 1)]
+    #[error("the piece that begins with facet {} lies inside the piece that begins with facet {}{}", .inner_facet + 1, .outer_facet + 1, Such(*.count, "pieces"))]
     Nested {
         /// First facet of the inner piece.
         inner_facet: usize,
@@ -125,7 +125,7 @@ pub enum SurfaceError {
         count: usize,
     },
     /// Facets so thin that their normals are noise.
-    #[error("facet {} at {} is {aspect:.0} times longer than high ({count} such facets)", .facet + 1, At(.place))]
+    #[error("facet {} at {} is {aspect:.0} times longer than high{}", .facet + 1, At(.place), Such(*.count, "facets"))]
     AbsurdSliver {
         /// The worst facet.
         facet: usize,
@@ -139,7 +139,7 @@ pub enum SurfaceError {
 }
 
 impl SurfaceError {
-    /// What the user can do next.
+    /// What the user can do next, where mending was not tried.
     pub fn hint(&self) -> &'static str {
         match self {
             Self::OtherMesh { .. } => "examine the mesh again after changing it",
@@ -167,9 +167,36 @@ impl SurfaceError {
             Self::AbsurdSliver { .. } => "mesh the body again with a limit on the facets' aspect, and export again",
         }
     }
+
+    /// What the user can do next where mending was tried, or can't help.
+    pub fn hint_beyond_mending(&self) -> &'static str {
+        match self {
+            Self::DegenerateFacet { .. } | Self::DuplicateFacet { .. } => {
+                "mesh the body again in the modelling program, and export again"
+            }
+            Self::Open { .. } => {
+                "the hole can't be closed without guessing what belongs there: export the body with the missing part"
+            }
+            Self::MixedOrientation { .. } | Self::InsideOut => {
+                "turn the facets outward in the modelling program, and export again"
+            }
+            Self::Nested { .. } => "the fluid does not reach inner pieces: export the outer skin alone",
+            other => other.hint(),
+        }
+    }
 }
 
-struct At<'a>(&'a Point);
+/// The count of flaws of one kind, if there are more than the one that is named.
+struct Such(usize, &'static str);
+
+impl std::fmt::Display for Such {
+    fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
+        let Self(count, what) = self;
+        if *count > 1 { write!(f, " ({count} such {what})") } else { Ok(()) }
+    }
+}
+
+pub(super) struct At<'a>(pub &'a Point);
 
 impl std::fmt::Display for At<'_> {
     fn fmt(&self, f: &mut std::fmt::Formatter<'_>) -> std::fmt::Result {
@@ -177,8 +204,13 @@ impl std::fmt::Display for At<'_> {
     }
 }
 
-/// Six significant digits: enough to find the place.
-fn short(number: f64) -> String {
-    let rounded: f64 = format!("{number:.5e}").parse().unwrap_or(number);
-    format!("{rounded:?}")
+/// From here on a coordinate that finds a place needs more digits.
+const LARGE_COORDINATE: f64 = 1000.0;
+
+/// Six significant digits, or ten of a large number: enough to find the place, far from the origin too.
+pub(super) fn short(number: f64) -> String {
+    let rounded = if number.abs() < LARGE_COORDINATE { format!("{number:.5e}") } else { format!("{number:.9e}") };
+    let rounded: f64 = rounded.parse().unwrap_or(number);
+    // Adding zero turns -0.0 into 0.0.
+    format!("{:?}", rounded + 0.0)
 }

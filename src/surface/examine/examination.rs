@@ -1,7 +1,7 @@
 //! The whole examination in one struct.
 
 use super::character::{Character, find_character};
-use super::creases::turn_angles;
+use super::creases::{EdgeTurn, turn_angles};
 use super::fans::{PinchedVertex, pinched_vertices};
 use super::flaws::{NonManifoldEdge, Sliver, duplicates, non_manifold_edges, thin_facets};
 use super::holes::{Hole, find_holes};
@@ -58,6 +58,8 @@ pub struct Examination {
     pub creases: (usize, f64),
     /// The largest turn of the normal at an edge, in degrees.
     pub sharpest_turn_deg: f64,
+    /// How far the surface turns at each edge that joins two facets which agree on their outside.
+    pub turns: Vec<EdgeTurn>,
     /// Whether it is a polyhedron or a smooth body sampled by facets.
     pub character: Character,
 }
@@ -66,6 +68,12 @@ impl Examination {
     /// `true` if the surface is closed: every edge has exactly two facets.
     pub fn is_closed(&self) -> bool {
         self.facets > 0 && self.shells.iter().all(|shell| shell.closed)
+    }
+
+    /// Number and total length (file units) of the edges at which the normal turns by `angle_deg` or more.
+    pub fn creases_from(&self, angle_deg: f64) -> (usize, f64) {
+        let sharp = self.turns.iter().filter(|turn| turn.angle_deg >= angle_deg);
+        sharp.fold((0, 0.0), |(count, length), turn| (count + 1, length + turn.length))
     }
 }
 
@@ -85,10 +93,11 @@ pub fn examine(mesh: &TriangleMesh) -> Examination {
     let longest = lengths.iter().copied().fold(0.0, f64::max);
 
     let threshold = SMOOTH_SURFACE_CREASE_DEG.to_radians();
-    let (mut creases, mut sharpest) = ((0, 0.0), 0.0_f64);
+    let (mut creases, mut sharpest, mut turns) = ((0, 0.0), 0.0_f64, Vec::with_capacity(table.edges.len()));
     for ((edge, angle), length) in table.edges.iter().zip(turn_angles(mesh, &table)).zip(&lengths) {
         if edge.pair().is_some() {
             sharpest = sharpest.max(angle);
+            turns.push(EdgeTurn { vertices: edge.ends, angle_deg: angle.to_degrees(), length: *length });
             if angle >= threshold {
                 creases = (creases.0 + 1, creases.1 + length);
             }
@@ -114,6 +123,7 @@ pub fn examine(mesh: &TriangleMesh) -> Examination {
         genus: shells.iter().map(|shell| shell.genus).sum(),
         creases,
         sharpest_turn_deg: sharpest.to_degrees(),
+        turns,
         character: find_character(mesh, &table),
         shells,
         shell_of_facet,

@@ -3,10 +3,12 @@
 use std::collections::HashSet;
 use std::fmt;
 
+use super::error::{At, short};
 use super::flaws::{duplicates, thin_facets};
 use super::holes::find_holes;
 use super::nesting::find_nesting;
 use super::shells::find_shells;
+use super::usable::told;
 use crate::surface::mesh::{EdgeTable, MAX_POLYGON_CORNERS, triangulate};
 use crate::surface::{Point, TriangleMesh, weld, weld_tolerance};
 
@@ -109,31 +111,52 @@ pub enum Mended {
 impl fmt::Display for Mended {
     fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
         match self {
-            Self::Welded { vertices, largest_move } => {
-                write!(
-                    f,
-                    "Merged {vertices} vertices with others at the same place (moved by {largest_move:.2e} at most)."
-                )
+            Self::Welded { vertices, largest_move: 0.0 } => {
+                write!(f, "Merged {} with others at the same place.", Count(*vertices, "vertex", "vertices"))
             }
+            Self::Welded { vertices, largest_move } => write!(
+                f,
+                "Merged {} with others beside them (moved by {largest_move:.2e} at most).",
+                Count(*vertices, "vertex", "vertices")
+            ),
+            Self::DroppedDuplicates { facets: 1 } => write!(f, "Dropped 1 facet that was there twice."),
             Self::DroppedDuplicates { facets } => write!(f, "Dropped {facets} facets that were there twice."),
-            Self::DroppedDegenerate { facets } => write!(f, "Dropped {facets} facets without area."),
-            Self::CutAtVertex { facets } => write!(f, "Cut {facets} facets in two at a vertex on their edge."),
-            Self::Turned { facets, of } => write!(f, "Turned {facets} of {of} facets round to face outward."),
+            Self::DroppedDegenerate { facets } => write!(f, "Dropped {} without area.", facet_count(*facets)),
+            Self::CutAtVertex { facets } => write!(f, "Cut {} in two at a vertex on an edge.", facet_count(*facets)),
+            Self::Turned { facets, of } => {
+                write!(f, "Turned {} of {of} round to face outward.", facet_count(*facets))
+            }
             Self::ClosedHole { place, length, facets } => write!(
                 f,
-                "Closed the hole near ({:.6}, {:.6}, {:.6}), {length:.6} long, with {facets} facets.",
-                place.x, place.y, place.z
+                "Closed the hole near {}, {} long around, with {}.",
+                At(place),
+                short(*length),
+                facet_count(*facets)
             ),
-            Self::LeftHole { place, length } => write!(
-                f,
-                "Left the hole near ({:.6}, {:.6}, {:.6}) open: its boundary of {length:.6} is too long.",
-                place.x, place.y, place.z
-            ),
+            Self::LeftHole { place, length } => {
+                write!(f, "Left the hole near {} open: its boundary of {} is too long.", At(place), short(*length))
+            }
             Self::DroppedInner { shells, facets } => {
-                write!(f, "Dropped {shells} pieces ({facets} facets) that lie inside others.")
+                let lie = if *shells == 1 { "lies inside another" } else { "lie inside others" };
+                write!(f, "Dropped {} ({}) that {lie}.", Count(*shells, "piece", "pieces"), facet_count(*facets))
             }
         }
     }
+}
+
+/// A number with its noun, one of it and several.
+struct Count(usize, &'static str, &'static str);
+
+impl fmt::Display for Count {
+    fn fmt(&self, f: &mut fmt::Formatter<'_>) -> fmt::Result {
+        let Self(count, one, several) = self;
+        write!(f, "{count} {}", if *count == 1 { one } else { several })
+    }
+}
+
+/// A number of facets.
+fn facet_count(count: usize) -> Count {
+    Count(count, "facet", "facets")
 }
 
 /// Mends what the options allow, and lists what it did. The mesh that comes back may still be unusable: examine it.
@@ -247,10 +270,11 @@ fn orient(mesh: TriangleMesh, done: &mut Vec<Mended>) -> TriangleMesh {
 
 fn close_holes(mesh: TriangleMesh, largest: f64, done: &mut Vec<Mended>) -> TriangleMesh {
     let (low, high) = mesh.bounding_box();
-    let limit = largest * (high - low).norm();
+    let size = (high - low).norm();
+    let limit = largest * size;
     let (mut facets, mut groups) = (mesh.facets().to_vec(), mesh.groups().to_vec());
     for hole in find_holes(&mesh, &EdgeTable::new(&mesh)) {
-        let (place, length) = (hole.place, hole.length);
+        let (place, length) = (told(hole.place, size), hole.length);
         if length > limit || hole.vertices.len() > MAX_POLYGON_CORNERS {
             done.push(Mended::LeftHole { place, length });
             continue;

@@ -20,6 +20,7 @@ mod triangle_pair;
 mod usable;
 
 pub use character::{Character, CharacterKind, SMOOTH_SURFACE_CREASE_DEG};
+pub use creases::EdgeTurn;
 pub(crate) use creases::{Regions, turn_angles};
 pub use error::SurfaceError;
 pub use examination::{Examination, examine};

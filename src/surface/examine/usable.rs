@@ -4,7 +4,7 @@ use super::error::SurfaceError;
 use super::examination::Examination;
 use super::flaws::ABSURD_ASPECT;
 use super::orientation::Orientation;
-use crate::surface::TriangleMesh;
+use crate::surface::{Point, TriangleMesh};
 
 /// Volume over the three-halves power of the area below which a closed surface is taken for a folded sheet. A disc a
 /// thousand times wider than thick has 3e-4.
@@ -29,8 +29,7 @@ pub fn usable(mesh: &TriangleMesh, examination: &Examination) -> Result<(), Surf
     if facets == 0 {
         return Err(SurfaceError::Empty);
     }
-    let (low, high) = examination.bounding_box;
-    let size = (high - low).norm();
+    let size = size(examination);
     if !SIZES.contains(&size) {
         return Err(SurfaceError::AbsurdSize { size });
     }
@@ -40,26 +39,44 @@ pub fn usable(mesh: &TriangleMesh, examination: &Examination) -> Result<(), Surf
     space_is_sound(examination)
 }
 
+fn size(examination: &Examination) -> f64 {
+    let (low, high) = examination.bounding_box;
+    (high - low).norm()
+}
+
+/// Places are rounded to this part of the body's size: single precision, as most files have.
+pub(super) const PLACE_ROUNDING: f64 = f32::EPSILON as f64;
+
+/// A place to be told: what is rounding on a body of this size is 0.
+pub(super) fn told(place: Point, size: f64) -> Point {
+    place.map(|x| if x.abs() <= PLACE_ROUNDING * size { 0.0 } else { x })
+}
+
 fn facets_are_sound(mesh: &TriangleMesh, examination: &Examination) -> Result<(), SurfaceError> {
     if let Some(&facet) = examination.degenerate_facets.first() {
         let count = examination.degenerate_facets.len();
-        return Err(SurfaceError::DegenerateFacet { facet, place: mesh.centre(facet), count });
+        return Err(SurfaceError::DegenerateFacet { facet, place: told(mesh.centre(facet), size(examination)), count });
     }
     if let Some(&facets) = examination.duplicate_facets.first() {
         let count = examination.duplicate_facets.len();
-        return Err(SurfaceError::DuplicateFacet { facets, place: mesh.centre(facets[0]), count });
+        return Err(SurfaceError::DuplicateFacet {
+            facets,
+            place: told(mesh.centre(facets[0]), size(examination)),
+            count,
+        });
     }
     Ok(())
 }
 
 fn edges_are_sound(examination: &Examination) -> Result<(), SurfaceError> {
+    let size = size(examination);
     if let Some(edge) = examination.non_manifold_edges.first() {
         let count = examination.non_manifold_edges.len();
-        return Err(SurfaceError::NonManifoldEdge { place: edge.place, facets: edge.facets.len(), count });
+        return Err(SurfaceError::NonManifoldEdge { place: told(edge.place, size), facets: edge.facets.len(), count });
     }
     if let Some(hole) = examination.holes.iter().max_by(|a, b| a.length.total_cmp(&b.length)) {
         return Err(SurfaceError::Open {
-            place: hole.place,
+            place: told(hole.place, size),
             edges: hole.vertices.len(),
             length: hole.length,
             facet: hole.facet,
@@ -85,20 +102,25 @@ fn orientation_is_outward(mesh: &TriangleMesh, examination: &Examination) -> Res
     }
     let flipped = wrong(false).flat_map(|shell| &shell.flipped);
     if let Some(&facet) = flipped.clone().min() {
-        return Err(SurfaceError::MixedOrientation { facet, place: mesh.centre(facet), count: flipped.count() });
+        return Err(SurfaceError::MixedOrientation {
+            facet,
+            place: told(mesh.centre(facet), size(examination)),
+            count: flipped.count(),
+        });
     }
     Ok(())
 }
 
 fn space_is_sound(examination: &Examination) -> Result<(), SurfaceError> {
+    let size = size(examination);
     let mut pinched = examination.pinched_vertices.iter().filter(|vertex| !vertex.between_shells);
     if let Some(vertex) = pinched.next() {
-        return Err(SurfaceError::PinchedVertex { place: vertex.place, count: 1 + pinched.count() });
+        return Err(SurfaceError::PinchedVertex { place: told(vertex.place, size), count: 1 + pinched.count() });
     }
     if let Some(pair) = examination.intersections.pairs.first() {
         return Err(SurfaceError::SelfIntersecting {
             facets: pair.facets,
-            place: pair.place,
+            place: told(pair.place, size),
             count: examination.intersections.pairs.len(),
             complete: examination.intersections.complete,
         });
@@ -114,7 +136,12 @@ fn space_is_sound(examination: &Examination) -> Result<(), SurfaceError> {
     let absurd = || examination.slivers.iter().filter(|sliver| sliver.aspect > ABSURD_ASPECT);
     if let Some(worst) = absurd().max_by(|a, b| a.aspect.total_cmp(&b.aspect)) {
         let count = absurd().count();
-        return Err(SurfaceError::AbsurdSliver { facet: worst.facet, place: worst.place, aspect: worst.aspect, count });
+        return Err(SurfaceError::AbsurdSliver {
+            facet: worst.facet,
+            place: told(worst.place, size),
+            aspect: worst.aspect,
+            count,
+        });
     }
     Ok(())
 }

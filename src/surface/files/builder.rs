@@ -104,7 +104,7 @@ impl Builder {
         if cut > 0 {
             let whole = self.polygons.len();
             self.notes
-                .push(format!("{cut} of {whole} facets have more than three corners and were cut into triangles."));
+                .push(format!("{cut} of {whole} facets have more than three corners and were cut into triangles, which count as facets."));
         }
         let mesh = TriangleMesh::with_groups(self.vertices, facets, groups)?;
         Ok(RawSurface { mesh, format, variant: variant.to_owned(), group_names: self.group_names, notes: self.notes })
