@@ -37,6 +37,8 @@ fn every_answer_can_be_recorded_and_computed_again() {
         "drag rod:12±0.5x2um --fluid glycerol:60% --temperature 22±0.5degC --accuracy 2%",
         "drag geometries/bracket.stl --unit um --elements 80 --turn 30deg@x --turn 20deg@z --at 1um,2um,-3um",
         "drag examples/cases/two-beads.json --elements 80",
+        "regime geometries/block.stl --unit um --material pmma --centrifuge g=20",
+        "regime --in slot:height=20um --flow slot:mean=1mm/s",
         "fluid sucrose:20% --temperature 7degC",
         "fluid",
         "surface geometries/redcell.stl --unit um --mend",

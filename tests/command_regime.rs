@@ -129,7 +129,7 @@ fn the_bracket_of_a_shape_holds_what_is_solved() {
         let run = slowmote(&format!("drag {body} --accuracy 5% --json")).ends_with(0);
         let solved: slowmote::question::DragAnswer = serde_json::from_str(&run.stdout).unwrap();
         let (low, high) = (bounds.hydrodynamic_radius_at_least_m, bounds.hydrodynamic_radius_at_most_m);
-        let largest = solved.principal.drag_n_s_per_m[2] / (6.0 * PI * solved.fluid.viscosity_pa_s);
+        let largest = solved.principal.unwrap().drag_n_s_per_m[2] / (6.0 * PI * solved.fluid.viscosity_pa_s);
         let mean = solved.hydrodynamic_radius_m.unwrap();
         assert!(low < mean && largest < high && high < 2.5 * low, "{body}: {low:e} {mean:e} {largest:e} {high:e}");
     }

@@ -246,14 +246,6 @@ fn both_factorisations_agree_and_say_which_ran() {
 }
 
 #[test]
-fn cautions_name_what_can_hurt() {
-    let cautions = drag("redcell:7.82um --fluid plasma --temperature 37degC --elements 60").cautions.join(" ");
-    assert!(cautions.contains("soft") && cautions.contains("licensed practitioners"), "{cautions}");
-    assert!(drag("sphere:10um --elements 32").cautions.is_empty());
-    assert!(drag("sphere:1m --elements 32").cautions.join(" ").contains("unit"));
-}
-
-#[test]
 fn air_slips_along_small_bodies() {
     let answer = drag("sphere:1um --fluid air --elements 32");
     // 2 x 66.4 nm / 1 um is beyond 0.1.

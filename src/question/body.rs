@@ -11,6 +11,8 @@ const MEASURING_PANELS: usize = 1500;
 pub struct Body {
     /// What it is called.
     pub name: String,
+    /// The name of its shape, such as `redcell`; none for a file.
+    pub shape: Option<String>,
     /// Its surface, m.
     pub blueprint: Blueprint,
     /// What is known of its size without measuring.
@@ -32,6 +34,7 @@ impl Body {
     pub fn exact(name: impl Into<String>, blueprint: Blueprint) -> Self {
         Self {
             name: name.into(),
+            shape: None,
             blueprint,
             known: KnownSize::default(),
             facets: None,

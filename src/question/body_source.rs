@@ -196,6 +196,7 @@ fn shape(text: &str, unit: Option<&LengthUnit>, geometry: Option<Geometry>) -> R
     Ok(Body {
         // A shape's origin is its centroid.
         known: KnownSize { volume_m3: Some(exact.volume), area_m2: exact.area, centroid_m: Some(Point::zeros()) },
+        shape: spec.shape.name().split(':').next().map(str::to_owned),
         uncertainties: uncertain.map(size).collect(),
         geometry: geometry.unwrap_or(Geometry::Exact),
         ..Body::exact(text.trim(), spec.shape.blueprint())

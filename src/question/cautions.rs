@@ -5,6 +5,15 @@ use crate::physical::Fluid;
 /// Red cells are told by the shape's name.
 const RED_CELL: &str = "redcell";
 
+/// From this temperature a liquid burns skin in less than a minute, degC. Common practice, no source.
+const SCALDING_C: f64 = 50.0;
+
+/// From this temperature vapour and splashes are a danger by themselves, degC. A choice of this program.
+const VERY_HOT_C: f64 = 90.0;
+
+/// Fluids below this density are gases, kg/m3.
+const DENSEST_GAS_KG_M3: f64 = 100.0;
+
 /// Bodies with a smaller half length, m, feel the molecules of a liquid one by one. Common practice, no source.
 const FEWEST_MOLECULES_M: f64 = 5e-9;
 
@@ -20,9 +29,9 @@ const BIOLOGICAL: &str = "Handle cells and blood products by your laboratory's r
 pub(super) const SOFT: &str =
     "Cells are soft and differ from each other: a rigid body of one size stands for them here.";
 
-/// The cautions for a body of this name and half length (m) in this fluid, the fluid's own first.
-pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
-    let mut cautions = fluid.cautions().to_vec();
+/// The cautions for a body of this shape, if it is a named one, and half length (m) in this fluid, the fluid's own first.
+pub(super) fn body_cautions(shape: Option<&str>, half_length_m: f64, fluid: &Fluid) -> Vec<String> {
+    let mut cautions = fluid_cautions(fluid);
     if half_length_m < FEWEST_MOLECULES_M {
         cautions.push(
             "So small a body feels the molecules of the fluid one by one; drag with a sticking, continuous fluid is \
@@ -33,7 +42,7 @@ pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) 
     if half_length_m > LARGEST_USUAL_M {
         cautions.push("This is a large body for creeping flow: is its unit right?".to_owned());
     }
-    let red_cell = body_name.starts_with(RED_CELL);
+    let red_cell = shape == Some(RED_CELL);
     if red_cell {
         cautions.push(
             "A red cell is soft, and its shape follows the flow and the medium: the answer is that of a rigid body of \
@@ -41,18 +50,40 @@ pub(super) fn body_cautions(body_name: &str, half_length_m: f64, fluid: &Fluid) 
                 .to_owned(),
         );
     }
-    if red_cell || is(fluid, "plasma") {
-        cautions.push(BLOOD.to_owned());
-    }
-    if red_cell || is(fluid, "culture-medium") || is(fluid, "plasma") {
-        cautions.push(BIOLOGICAL.to_owned());
+    for (applies, text) in [(red_cell, BLOOD), (red_cell, BIOLOGICAL)] {
+        if applies && !cautions.iter().any(|known| known == text) {
+            cautions.push(text.to_owned());
+        }
     }
     cautions
 }
 
-/// The cautions for a fluid without a body.
+/// The cautions for a fluid, with or without a body: its own, its temperature, what it is.
 pub(super) fn fluid_cautions(fluid: &Fluid) -> Vec<String> {
-    body_cautions("", FEWEST_MOLECULES_M, fluid)
+    let mut cautions = fluid.cautions().to_vec();
+    let temperature_c = fluid.temperature_c();
+    let is_liquid = fluid.density_kg_m3() > DENSEST_GAS_KG_M3;
+    if temperature_c >= SCALDING_C && is_liquid {
+        let vapour = if temperature_c >= VERY_HOT_C { "; vapour and splashes burn too" } else { "" };
+        cautions.push(format!(
+            "At {temperature_c:.0} degC the fluid scalds{vapour}: guard against burns, and follow the local rules for hot \
+             work."
+        ));
+    }
+    if fluid.is_given_by_numbers() {
+        cautions.push(
+            "What this fluid is, the program does not know: if it is toxic, flammable or corrosive, its safety data sheet \
+             and the local rules come first."
+                .to_owned(),
+        );
+    }
+    if is(fluid, "plasma") {
+        cautions.push(BLOOD.to_owned());
+    }
+    if is(fluid, "culture-medium") || is(fluid, "plasma") {
+        cautions.push(BIOLOGICAL.to_owned());
+    }
+    cautions
 }
 
 /// The cautions for a body that lives, whatever it is called; `medical` if it is one of blood or tissue.

@@ -4,6 +4,7 @@ use schemars::JsonSchema;
 use serde::{Deserialize, Serialize};
 
 use super::answer::FluidAnswer;
+use super::cautions::fluid_cautions;
 use crate::physical::Fluid;
 use crate::physical::fluids::CatalogueEntry;
 
@@ -101,7 +102,7 @@ impl FluidReport {
             valid_from_to_c: fluid.validity_c().map(|(low, high)| [low, high]),
             mean_free_path_m: fluid.mean_free_path_m(),
             source: fluid.source().to_owned(),
-            cautions: fluid.cautions().to_vec(),
+            cautions: fluid_cautions(fluid),
         }
     }
 }

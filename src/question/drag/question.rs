@@ -142,7 +142,7 @@ impl DragQuestion {
         let mut all = Vec::new();
         for standing in &scene.bodies {
             let half_length_m = 0.5 * standing.extent.size().max();
-            for caution in body_cautions(&standing.body.name, half_length_m, &self.fluid) {
+            for caution in body_cautions(standing.body.shape.as_deref(), half_length_m, &self.fluid) {
                 if !all.contains(&caution) {
                     all.push(caution);
                 }

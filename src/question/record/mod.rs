@@ -3,9 +3,9 @@
 mod compare;
 mod drag;
 mod file;
-mod record;
+mod written;
 
 pub use compare::{AGAIN_SCHEMA, AgainReport, Comparison, Difference};
 pub use file::RecordedFile;
 pub(super) use file::hexadecimal;
-pub use record::{RECORD_SCHEMA, Record, RecordError};
+pub use written::{RECORD_SCHEMA, Record, RecordError};

@@ -26,6 +26,8 @@ const SAME: f64 = 1e-3;
 pub struct RegimeBody {
     /// What it is called.
     pub name: String,
+    /// The name of its shape; none for a file or a span.
+    pub shape: Option<String>,
     /// Edges of the box around it.
     pub size_m: Vector,
     /// Volume, m3.
@@ -49,6 +51,7 @@ impl RegimeBody {
         let radius = 0.5 * diameter;
         Self {
             name: format!("a body of {}", span.to_text(3)),
+            shape: None,
             size_m: [diameter; 3],
             volume_m3: PI * diameter.powi(3) / 6.0,
             enclosing_radius_m: radius,
@@ -77,6 +80,7 @@ impl RegimeBody {
         });
         Some(Self {
             name: body.name.clone(),
+            shape: body.shape.clone(),
             size_m: extent.size().into(),
             volume_m3: volume,
             enclosing_radius_m: same(sphere),
@@ -129,9 +133,10 @@ fn principal_radii(half_axes: [f64; 3]) -> [f64; 3] {
 #[cfg(test)]
 mod tests {
     use super::*;
+    use crate::question::Pieces;
 
     fn body(text: &str) -> RegimeBody {
-        RegimeBody::of(&Body::read(text, None, None).unwrap()).unwrap()
+        RegimeBody::of(&Body::read(text, None, None, Pieces::Untold).unwrap()[0]).unwrap()
     }
 
     #[test]

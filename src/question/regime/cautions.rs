@@ -23,7 +23,7 @@ pub(super) fn cautions(
     let mut cautions = match body {
         Some(body) => {
             let half = 0.5 * body.size_m.into_iter().fold(0.0, f64::max);
-            body_cautions(&body.name, half, fluid)
+            body_cautions(body.shape.as_deref(), half, fluid)
         }
         None => fluid_cautions(fluid),
     };
@@ -42,8 +42,8 @@ pub(super) fn cautions(
     }
     if centrifuge {
         cautions.push(
-            "Stay within the rated speed, load and balance of rotor and tubes; its manual and the local rules come \
-             first."
+            "Stay within the rated speed, load and balance of rotor and tubes. The centrifuge's manual, trained staff \
+             and the local rules come first."
                 .to_owned(),
         );
     }
