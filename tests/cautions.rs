@@ -53,6 +53,13 @@ fn blood_and_cells() {
     cautions("regime --size 8um --material white-cell", &[SOFT, BLOOD, BIOLOGICAL]);
 }
 
+#[test]
+fn materials_that_live() {
+    cautions("material polystyrene", &[]);
+    cautions("material yeast", &[SOFT, BIOLOGICAL]);
+    cautions("material erythrocyte", &[SOFT, BLOOD, BIOLOGICAL]);
+}
+
 /// By its shape, whatever a case calls it.
 #[test]
 fn a_red_cell_by_another_name() {

@@ -41,6 +41,8 @@ fn every_answer_can_be_recorded_and_computed_again() {
         "regime --in slot:height=20um --flow slot:mean=1mm/s",
         "fluid sucrose:20% --temperature 7degC",
         "fluid",
+        "material red-cell",
+        "material",
         "surface geometries/redcell.stl --unit um --mend",
         "surface ring:10x2um --elements 200",
     ];

@@ -53,6 +53,8 @@ fn every_answer_obeys_its_schema() {
         ("surface", "surface cube:5um"),
         ("fluid", "fluid glycerol:60%"),
         ("fluids", "fluid"),
+        ("material", "material silica"),
+        ("materials", "material"),
         ("regime", "regime rod:12±1x2um --material polystyrene --in tube:diameter=50um --flow tube:mean=1mm/s"),
         ("regime", "regime --in duct:width=100um,height=40um,length=2cm --flow duct:rate=10uL/min"),
     ];

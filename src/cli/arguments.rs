@@ -10,6 +10,7 @@ use super::again::AgainArguments;
 use super::asked::Asked;
 use super::drag::DragArguments;
 use super::fluid::FluidArguments;
+use super::material::MaterialArguments;
 use super::regime::RegimeArguments;
 use super::schema::SchemaArguments;
 use super::surface::SurfaceArguments;
@@ -52,6 +53,8 @@ pub enum Command {
     Surface(SurfaceArguments),
     /// Viscosity and density of a fluid, and how well they are known; without a name, the list of fluids
     Fluid(FluidArguments),
+    /// Usual density of a material, and its source; without a name, the list of materials
+    Material(MaterialArguments),
     /// Computes a recorded answer again and says what differs beyond the stated errors
     Again(AgainArguments),
     /// The JSON Schema of an input or output; without a name, the list of them
@@ -81,6 +84,7 @@ impl Arguments {
             Command::Regime(arguments) => arguments.run(asked),
             Command::Surface(arguments) => arguments.run(asked),
             Command::Fluid(arguments) => arguments.run(asked),
+            Command::Material(arguments) => arguments.run(asked),
             Command::Again(arguments) => arguments.run(),
             Command::Schema(arguments) => arguments.run(),
         }
@@ -96,6 +100,7 @@ impl Arguments {
             Command::Regime(arguments) => as_value(&arguments.answer()?),
             Command::Surface(arguments) => as_value(&arguments.answer()?),
             Command::Fluid(arguments) => arguments.answer(),
+            Command::Material(arguments) => arguments.answer(),
             Command::Again(_) | Command::Schema(_) => {
                 Err(Failure::new("this command gives no answer that can be recorded")
                     .hint("give a record that `--record FILE` wrote"))

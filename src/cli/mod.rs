@@ -13,6 +13,7 @@ mod exit;
 mod failure;
 mod fluid;
 mod machine;
+mod material;
 mod options;
 mod output;
 mod progress;

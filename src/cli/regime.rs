@@ -15,6 +15,7 @@ use slowmote::surface::Shape;
 use super::asked::Asked;
 use super::case::filled;
 use super::drag::settle;
+use super::material::known_material;
 use super::options::{
     BodyOptions, ChannelOption, FlowOption, FluidOptions, OutputOptions, PiecesName, RecordOptions, centrifuge,
     channel, flow, length_unit, parse_with,
@@ -251,10 +252,6 @@ impl RegimeArguments {
         }
         given
     }
-}
-
-fn known_material(name: &str) -> Result<&'static Material, Failure> {
-    Material::find(name).map_err(|error| Failure::of(&error).hint("or give its density, `--body-density 1.05g/mL`"))
 }
 
 type Parse = fn(&str) -> Result<Quantity, QuantityError>;

@@ -1,6 +1,7 @@
 //! Densities of common materials by name, each with an honest spread.
 //!
-//! They are values for a first estimate: nearly all are common practice without a source, and say so.
+//! They are values for a first estimate. Those with a published source name it; the others are common practice without one,
+//! and say so.
 //! A catalogue density of the very product is always better.
 
 use crate::physical::nearest::nearest;
@@ -108,6 +109,12 @@ fn plain_name(written: &str) -> String {
 
 const COMMON_PRACTICE: &str = "common practice, no source";
 
+/// Checked through package ht 1.2.0 (`tests/scripts/materials_reference.py`).
+const BUILDING_MATERIALS: &str = "DIN EN 12524 (2000), Building materials and products, tabulated design values";
+
+/// Checked through package periodictable 2.1.0.
+const CRC: &str = "CRC Handbook of Chemistry and Physics, 80th edition (1999)";
+
 const fn material(
     name: &'static str,
     aliases: &'static [&'static str],
@@ -118,22 +125,31 @@ const fn material(
     Material { name, aliases, density_kg_m3, spread_kg_m3, source: COMMON_PRACTICE, note }
 }
 
+impl Material {
+    /// The same with its published source.
+    const fn from(self, source: &'static str) -> Self {
+        Self { source, ..self }
+    }
+}
+
 /// Half widths are the spread between products, not the uncertainty of one.
 const MATERIALS: &[Material] = &[
-    material("polystyrene", &["ps"], 1050.0, 10.0, "solid beads; porous or magnetic ones differ"),
-    material("pmma", &["acrylic"], 1185.0, 10.0, ""),
+    material("polystyrene", &["ps"], 1050.0, 10.0, "solid beads; porous or magnetic ones differ")
+        .from(BUILDING_MATERIALS),
+    material("pmma", &["acrylic"], 1185.0, 10.0, "").from(BUILDING_MATERIALS),
     material(
         "polyethylene",
         &["pe", "hdpe"],
         950.0,
-        20.0,
+        30.0,
         "low-density 0.92, high-density 0.96 g/mL; filled beads differ",
-    ),
-    material("polypropylene", &["pp"], 905.0, 10.0, ""),
-    material("nylon", &["polyamide"], 1140.0, 15.0, "takes up water"),
-    material("polycarbonate", &["pc"], 1200.0, 10.0, ""),
+    )
+    .from(BUILDING_MATERIALS),
+    material("polypropylene", &["pp"], 905.0, 10.0, "").from(BUILDING_MATERIALS),
+    material("nylon", &["polyamide"], 1140.0, 15.0, "takes up water").from(BUILDING_MATERIALS),
+    material("polycarbonate", &["pc"], 1200.0, 10.0, "").from(BUILDING_MATERIALS),
     material("peek", &[], 1310.0, 20.0, ""),
-    material("ptfe", &[], 2170.0, 40.0, ""),
+    material("ptfe", &[], 2170.0, 40.0, "").from(BUILDING_MATERIALS),
     material("pla", &["polylactide"], 1245.0, 15.0, "printed parts hold voids"),
     material("pdms", &["silicone-rubber"], 970.0, 20.0, "unfilled; filled silicone rubber reaches 1.2 g/mL"),
     material("melamine", &["melamine-resin"], 1510.0, 20.0, ""),
@@ -144,7 +160,8 @@ const MATERIALS: &[Material] = &[
         30.0,
         "cured acrylate resins for printing lie at 1.15 to 1.20 g/mL",
     ),
-    material("su-8", &["su8", "epoxy"], 1200.0, 40.0, ""),
+    material("su-8", &["su8", "epoxy"], 1200.0, 40.0, "the source is for epoxy resins at large")
+        .from(BUILDING_MATERIALS),
     material("agarose-gel", &["agarose", "hydrogel"], 1010.0, 10.0, "a gel of a few percent in water"),
     material(
         "silica-stober",
@@ -153,22 +170,23 @@ const MATERIALS: &[Material] = &[
         100.0,
         "grown from solution and porous on the nanometre scale; fused silica is denser",
     ),
-    material("fused-silica", &["quartz-glass"], 2200.0, 10.0, ""),
+    material("fused-silica", &["quartz-glass"], 2200.0, 10.0, "").from(BUILDING_MATERIALS),
     material("quartz", &["sand"], 2650.0, 10.0, ""),
-    material("soda-lime-glass", &["glass"], 2500.0, 30.0, "hollow beads are far lighter"),
+    material("soda-lime-glass", &["glass"], 2500.0, 30.0, "hollow beads are far lighter").from(BUILDING_MATERIALS),
     material("borosilicate", &["borosilicate-glass"], 2230.0, 30.0, ""),
     material("alumina", &[], 3950.0, 50.0, "dense; porous grades are lighter"),
     material("zirconia", &[], 6000.0, 100.0, "stabilised with yttria"),
-    material("steel", &["carbon-steel"], 7850.0, 50.0, ""),
-    material("stainless-steel", &["stainless"], 7950.0, 100.0, "300 and 400 series lie at 7.7 to 8.0 g/mL"),
-    material("aluminium", &["aluminum"], 2700.0, 30.0, ""),
-    material("titanium", &[], 4500.0, 30.0, ""),
-    material("copper", &[], 8950.0, 30.0, ""),
-    material("nickel", &[], 8900.0, 30.0, ""),
-    material("silver", &[], 10_490.0, 30.0, ""),
-    material("gold", &[], 19_300.0, 50.0, ""),
-    material("tungsten", &[], 19_250.0, 100.0, ""),
-    material("silicon", &[], 2330.0, 5.0, ""),
+    material("steel", &["carbon-steel"], 7850.0, 50.0, "").from(BUILDING_MATERIALS),
+    material("stainless-steel", &["stainless"], 7950.0, 100.0, "300 and 400 series lie at 7.7 to 8.0 g/mL")
+        .from(BUILDING_MATERIALS),
+    material("aluminium", &["aluminum"], 2700.0, 30.0, "").from(CRC),
+    material("titanium", &[], 4510.0, 30.0, "").from(CRC),
+    material("copper", &[], 8950.0, 30.0, "").from(CRC),
+    material("nickel", &[], 8900.0, 30.0, "").from(CRC),
+    material("silver", &[], 10_490.0, 30.0, "").from(CRC),
+    material("gold", &[], 19_300.0, 50.0, "").from(CRC),
+    material("tungsten", &[], 19_250.0, 100.0, "").from(CRC),
+    material("silicon", &[], 2330.0, 5.0, "").from(CRC),
     material(
         "iron-oxide",
         &["magnetite"],

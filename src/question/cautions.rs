@@ -1,9 +1,13 @@
 //! What a careful user would want to be reminded of, from body and fluid.
 
-use crate::physical::Fluid;
+use crate::physical::{Fluid, Material};
 
 /// Red cells are told by the shape's name.
 const RED_CELL: &str = "redcell";
+
+/// Materials that live: soft, and different from day to day; the first of them from blood.
+const LIVING: [&str; 6] = ["red-cell", "white-cell", "platelet", "mammalian-cell", "yeast", "bacterium"];
+const OF_BLOOD: usize = 3;
 
 /// From this temperature a liquid burns skin in less than a minute, degC. Common practice, no source.
 const SCALDING_C: f64 = 50.0;
@@ -86,9 +90,10 @@ pub(super) fn fluid_cautions(fluid: &Fluid) -> Vec<String> {
     cautions
 }
 
-/// The cautions for a body that lives, whatever it is called; `medical` if it is one of blood or tissue.
-pub(super) fn living_cautions(medical: bool) -> Vec<String> {
-    let medical = medical.then_some(BLOOD);
+/// The cautions for a material: those that live are soft and differ, and some are of blood.
+pub(super) fn material_cautions(material: &Material) -> Vec<String> {
+    let Some(place) = LIVING.iter().position(|name| *name == material.name()) else { return Vec::new() };
+    let medical = (place < OF_BLOOD).then_some(BLOOD);
     [SOFT, BIOLOGICAL].into_iter().chain(medical).map(str::to_owned).collect()
 }
 

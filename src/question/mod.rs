@@ -12,6 +12,7 @@ mod case;
 mod cautions;
 mod drag;
 mod fluid;
+mod material;
 mod placing;
 mod record;
 mod regime;
@@ -33,6 +34,7 @@ pub use budget::InputUncertainty;
 pub use case::{CASE_SCHEMA, Case, CaseBody, CaseError, CaseFluid};
 pub use drag::{DRAG_SCHEMA, DragError, DragQuestion, PrescribedMotion, StandingBody};
 pub use fluid::{CataloguedFluid, FLUID_SCHEMA, FluidCatalogue, FluidReport};
+pub use material::{MATERIAL_SCHEMA, MATERIALS_SCHEMA, MaterialCatalogue, MaterialReport};
 pub use placing::{Placing, Turn};
 pub use record::{AGAIN_SCHEMA, AgainReport, Comparison, Difference, RECORD_SCHEMA, Record, RecordError, RecordedFile};
 pub use regime::{

@@ -6,7 +6,8 @@ use super::case::Case;
 use super::fluid::CATALOGUE_SCHEMA;
 use super::{
     AGAIN_SCHEMA, AgainReport, CASE_SCHEMA, DRAG_SCHEMA, DragAnswer, FLUID_SCHEMA, FluidCatalogue, FluidReport,
-    RECORD_SCHEMA, REGIME_SCHEMA, Record, RegimeAnswer, SURFACE_SCHEMA, SurfaceReport,
+    MATERIAL_SCHEMA, MATERIALS_SCHEMA, MaterialCatalogue, MaterialReport, RECORD_SCHEMA, REGIME_SCHEMA, Record,
+    RegimeAnswer, SURFACE_SCHEMA, SurfaceReport,
 };
 
 /// The layout of an input or an output.
@@ -28,6 +29,8 @@ impl Layout {
         layout::<RegimeAnswer>(REGIME_SCHEMA, "the answer of `regime`"),
         layout::<FluidReport>(FLUID_SCHEMA, "the answer of `fluid NAME`"),
         layout::<FluidCatalogue>(CATALOGUE_SCHEMA, "the answer of `fluid`"),
+        layout::<MaterialReport>(MATERIAL_SCHEMA, "the answer of `material NAME`"),
+        layout::<MaterialCatalogue>(MATERIALS_SCHEMA, "the answer of `material`"),
         layout::<Record>(RECORD_SCHEMA, "a record, which `--record` writes and `again` reads"),
         layout::<AgainReport>(AGAIN_SCHEMA, "the answer of `again`"),
     ];

@@ -5,11 +5,7 @@ use super::evaluation::Evaluation;
 use super::given::{Given, Input};
 use crate::physical::quantity::{DisplayUnit, format_si};
 use crate::physical::{Fluid, Material};
-use crate::question::cautions::{SOFT, body_cautions, fluid_cautions, living_cautions};
-
-/// Materials that live: soft, and different from day to day; the first of them from blood.
-const LIVING: [&str; 6] = ["red-cell", "white-cell", "platelet", "mammalian-cell", "yeast", "bacterium"];
-const OF_BLOOD: usize = 3;
+use crate::question::cautions::{SOFT, body_cautions, fluid_cautions, material_cautions};
 
 /// The cautions for this fluid, body, material and centrifuge.
 pub(super) fn cautions(
@@ -28,13 +24,10 @@ pub(super) fn cautions(
         None => fluid_cautions(fluid),
     };
     cautions.extend(one_viscosity(fluid, body, given, state));
-    let living = material.and_then(|material| LIVING.iter().position(|name| *name == material.name()));
-    if let Some(place) = living {
-        for caution in living_cautions(place < OF_BLOOD) {
-            let said = caution == SOFT && cautions.iter().any(|known| known.contains("is soft"));
-            if !said && !cautions.contains(&caution) {
-                cautions.push(caution);
-            }
+    for caution in material.map(material_cautions).unwrap_or_default() {
+        let said = caution == SOFT && cautions.iter().any(|known| known.contains("is soft"));
+        if !said && !cautions.contains(&caution) {
+            cautions.push(caution);
         }
     }
     if let Some(material) = material.filter(|material| !material.note().is_empty()) {
