@@ -252,7 +252,8 @@ fn curved_patches_converge_with_the_third_power_or_better_and_estimates_hold() {
             let about = format!("{name}, {} facets: {errors:?} {displaced:?} {estimates:?}", mesh.facets().len());
             // A ring's hydrodynamic radius, of which the estimate is, depends less on its volume than a ball's.
             assert!(errors[0] <= estimates[0] && 0.9 * errors[1] <= estimates[1], "{about}");
-            assert!(estimates[0] < 22.0 * displaced[0] && estimates[1] < 2.0 * displaced[1], "{about}");
+            // Half as much again as the displacement is meant, for uneven traction.
+            assert!(estimates[0] < 18.0 * displaced[0] && estimates[1] < 2.0 * displaced[1], "{about}");
             assert!(displaced[0] < 0.12 * displaced[1], "{about}");
             displacements.push(displaced);
         }

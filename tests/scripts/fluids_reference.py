@@ -1,6 +1,6 @@
 """Reference numbers for the tests of the fluids, from general-purpose packages.
 
-    python -m venv venv && venv/bin/pip install coolprop==8.0.0 iapws==1.5.5 fluids==1.3.1
+    python -m venv venv && venv/bin/pip install coolprop==8.0.0 iapws==1.5.5 fluids==1.3.1 thermo==0.6.1
     venv/bin/python tests/scripts/fluids_reference.py
 
 The tests hold a copy of what this prints, with the package and its version beside each number.
@@ -15,9 +15,11 @@ import fluids  # noqa: E402
 from CoolProp.CoolProp import PropsSI  # noqa: E402
 from iapws import D2O, IAPWS95  # noqa: E402
 from iapws._iapws import _Liquid, _Viscosity  # noqa: E402
+from thermo.electrochem import Laliberte_density, Laliberte_viscosity  # noqa: E402
 
 ZERO_CELSIUS = 273.15
 ATMOSPHERE = 101325.0
+SODIUM_CHLORIDE, SUCROSE = "7647-14-5", "57-50-1"
 
 
 def kell(t):
@@ -38,7 +40,7 @@ def title(text):
 
 
 def main():
-    for package in ("coolprop", "iapws", "fluids"):
+    for package in ("coolprop", "iapws", "fluids", "thermo"):
         print(package, version(package))
 
     title("water, IAPWS R12-08 check points: T/K, rho, mu/Pa.s (iapws)")
@@ -77,6 +79,19 @@ def main():
         for t in (0, 20, 40):
             name = f"INCOMP::MGL-{100 * mass_fraction:.0f}%"
             print(mass_fraction, t, f"{PropsSI('D', 'T', t + ZERO_CELSIUS, 'P', ATMOSPHERE, name):.2f}")
+
+    title("0.9 % sodium chloride in water: t/degC, mu/Pa.s, rho (thermo, Laliberte 2009), mu/Pa.s, rho (coolprop, MNA)")
+    for t in (5, 10, 20, 25, 37):
+        state = ("T", t + ZERO_CELSIUS, "P", ATMOSPHERE, "INCOMP::MNA-0.9%")
+        other = (t + ZERO_CELSIUS, [0.009], [SODIUM_CHLORIDE])
+        print(t, f"{Laliberte_viscosity(*other):.5e}", f"{Laliberte_density(*other):.2f}",
+              f"{PropsSI('V', *state):.5e}", f"{PropsSI('D', *state):.2f}")
+
+    title("sucrose in water: mass fraction, t/degC, mu/Pa.s, rho (thermo, Laliberte 2009)")
+    for mass_fraction in (0.1, 0.2, 0.4, 0.5):
+        for t in (15, 20, 25, 37, 50):
+            state = (t + ZERO_CELSIUS, [mass_fraction], [SUCROSE])
+            print(mass_fraction, t, f"{Laliberte_viscosity(*state):.4e}", f"{Laliberte_density(*state):.2f}")
 
 
 if __name__ == "__main__":

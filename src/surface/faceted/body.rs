@@ -4,7 +4,7 @@ use std::sync::Arc;
 
 use super::curved::{CurvedMesh, curved};
 use super::ears::cut_ears;
-use super::geometry_error::{of_flat_facets, of_patches};
+use super::geometry_error::{CERTAIN_CREASE_DEG, of_doubtful_creases, of_flat_facets, of_patches};
 use super::graded::graded;
 use super::normals::{Estimate, VertexNormals};
 use super::options::{FacetedGeometry, FacetedLayout, FacetedOptions, GeometryChoice, LayoutChoice};
@@ -70,11 +70,23 @@ pub fn faceted(
     }
 
     let smooth = SmoothBody::new(mesh, shells, crease_deg);
+    // Whoever gives the angle knows the creases, and those of a polyhedron are its own.
+    let of_creases = match options.crease_deg {
+        None if !is_polyhedron => of_doubtful_creases(mesh, crease_deg),
+        _ => 0.0,
+    };
+    if of_creases > 0.0 {
+        notes.push(format!(
+            "Some edges stay sharp though they turn by less than {CERTAIN_CREASE_DEG} degrees, and may be those of a coarse \
+             sampling; the geometry error allows for it, and a finer file settles it."
+        ));
+    }
     let relative_geometry_error = match geometry.geometry {
         FacetedGeometry::Flat if is_polyhedron => 0.0,
-        FacetedGeometry::Flat => of_flat_facets(&smooth.mesh, &smooth.best.patches),
+        FacetedGeometry::Flat => of_flat_facets(&smooth.mesh, &smooth.best.patches) + of_creases,
         FacetedGeometry::Curved => {
-            of_patches(&smooth.mesh, &smooth.faces, &smooth.best.patches, &smooth.coarse.patches)
+            let patches = &smooth.best.patches;
+            of_patches(&smooth.mesh, &smooth.faces, patches, &smooth.coarse.patches) + of_creases
         }
     };
     let blueprint = match (graded, layout.layout) {
