@@ -99,9 +99,10 @@ impl Comparison {
     /// Compares numbers whose difference, as a fraction of `size`, may be `allowed`.
     pub(super) fn numbers(&mut self, key: &str, then: &[f64], now: &[f64], size: f64, allowed: f64) {
         self.compared += then.len();
-        let worst = then.iter().zip(now).map(|(a, b)| (a - b).abs()).fold(0.0_f64, f64::max);
+        // What is not a number counts as different, which the maximum alone would pass over.
+        let apart = |(a, b): (&f64, &f64)| if (a - b).is_nan() { f64::INFINITY } else { (a - b).abs() };
+        let worst = then.iter().zip(now).map(apart).fold(0.0_f64, f64::max);
         let difference = if worst == 0.0 { 0.0 } else { worst / size };
-        // Written so that what is not a number counts as different.
         if then.len() == now.len() && difference <= allowed + ROUNDING {
             if difference > self.largest.0 {
                 self.largest = (difference, Some(key.to_owned()));
